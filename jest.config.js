@@ -1,0 +1,21 @@
+/** One runner for every kind of test; each kind is a project so that one can be run alone (`npx jest --selectProjects unit`). */
+const transform = { '^.+\\.[jt]sx?$': ['@swc/jest'] };
+const project = (name, extra = {}) => ({
+  displayName: name,
+  testMatch: [`<rootDir>/tests/${name}/**/*.test.ts?(x)`],
+  transform,
+  testEnvironment: 'node',
+  ...extra,
+});
+
+module.exports = {
+  projects: [
+    project('unit'),
+    project('published'),
+    project('properties'),
+    project('functions'),
+    project('taskpane', { testEnvironment: 'jsdom' }),
+    project('workbench'),
+    project('browser'),
+  ],
+};
