@@ -1,0 +1,5 @@
+import type { BeamArguments } from '../open';
+/** READBACK: one column of sentences; never throws. */
+export function readback(_args: BeamArguments): string[][] {
+  throw new Error('pending');
+}
