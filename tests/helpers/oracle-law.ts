@@ -1,0 +1,73 @@
+/**
+ * A law (linear, or any function of x) over a short stretch as a polynomial in t = (x - a)/(b - a), for the oracle.
+ * Linear laws exactly; functions by interpolation at 17 Chebyshev points, accepted when five other points are met to a few units of the
+ * last place of a double, which is all that such a law is known to.
+ */
+import type { Law } from '../../src/beam/model';
+import type { Series } from './oracle-element';
+import { evaluate } from './oracle-element';
+import { Big } from './oracle-number';
+
+const POINTS = 17;
+const PROBES = [0.037, 0.21, 0.46, 0.71, 0.94];
+/** Lebesgue constant of 17 Chebyshev points (2.8) x rounding of the law and of its argument (some 8 eps) */
+const NOISE = 24 * 2 ** -52;
+
+/** null: the stretch must be halved first. */
+export function lawSeries(
+  stretch: { readonly from: number; readonly to: number; readonly law: Law },
+  a: number,
+  b: number,
+  force: boolean,
+): Series | null {
+  const { law } = stretch;
+  const x0 = Big.of(a);
+  const h = Big.of(b).minus(x0);
+  if (law.kind === 'linear') {
+    const start = Big.of(law.start);
+    if (law.start === law.end) return [start];
+    const rise = Big.of(law.end).minus(start).over(Big.of(stretch.to).minus(Big.of(stretch.from)));
+    return [start.plus(rise.times(x0.minus(Big.of(stretch.from)))), rise.times(h)];
+  }
+  const t: Big[] = [];
+  const c: Big[] = [];
+  let largest = 0;
+  for (let i = 0; i < POINTS; i++) {
+    const x = a + (b - a) * (0.5 - 0.5 * Math.cos((Math.PI * (i + 0.5)) / POINTS));
+    const y = law.at(x);
+    largest = Math.max(largest, Math.abs(y));
+    t.push(Big.of(x).minus(x0).over(h));
+    c.push(Big.of(y));
+  }
+  // Newton's divided differences, then powers of t
+  for (let j = 1; j < POINTS; j++) {
+    for (let i = POINTS - 1; i >= j; i--) c[i] = c[i]!.minus(c[i - 1]!).over(t[i]!.minus(t[i - j]!));
+  }
+  let series: Series = [c[POINTS - 1]!];
+  for (let j = POINTS - 2; j >= 0; j--) {
+    const next: Series = [c[j]!];
+    series.forEach((value, n) => {
+      next[n + 1] = (next[n + 1] ?? Big.zero).plus(value);
+      next[n] = (next[n] ?? Big.zero).minus(value.times(t[j]!));
+    });
+    series = next;
+  }
+  if (force) return series;
+  for (const probe of PROBES) {
+    const x = a + (b - a) * probe;
+    const miss = evaluate(series, Big.of(x).minus(x0).over(h)).minus(Big.of(law.at(x))).toNumber();
+    if (Math.abs(miss) > NOISE * largest) return null;
+  }
+  return series;
+}
+
+/** Whether 1/p has a power series that settles quickly on 0..1: p stays near its start. */
+export function variesLittle(p: Series): boolean {
+  if (p.length === 1) return true;
+  const start = p[0]!.toNumber();
+  const first = Math.abs(p[1]!.toNumber() / start);
+  if (p.length === 2) return first <= 0.3;
+  let rest = 0;
+  for (let n = 1; n < p.length; n++) rest += Math.abs(p[n]!.toNumber() / start);
+  return rest <= 0.5;
+}
