@@ -24,7 +24,13 @@ export const spring = (at: number, k: number): Support => support(at, { spring: 
 export const onSprings = (at: number, extra: Partial<Support>): Support => support(at, extra);
 
 const base = { row: 9, case: -1 } as const;
-export const point = (at: number, force: number, c = -1): Load => ({ ...base, case: c, kind: 'point', at, force });
+export const point = (at: number, force: number, c = -1): Load => ({
+  ...base,
+  case: c,
+  kind: 'point',
+  at,
+  force,
+});
 export const couple = (at: number, value: number, c = -1): Load => ({
   ...base,
   case: c,
@@ -48,7 +54,13 @@ export const settlement = (at: number, displacement: number): Load => ({
   displacement,
 });
 export const rotation = (at: number, angle: number): Load => ({ ...base, kind: 'rotation', at, angle });
-export const camber = (from: number, to: number, rise: number): Load => ({ ...base, kind: 'camber', from, to, rise });
+export const camber = (from: number, to: number, rise: number): Load => ({
+  ...base,
+  kind: 'camber',
+  from,
+  to,
+  rise,
+});
 export const curvature = (from: number, to: number, value: number): Load => ({
   ...base,
   kind: 'curvature',

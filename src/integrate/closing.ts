@@ -1,0 +1,318 @@
+/**
+ * The closing equations: the constants of integration and the reactions, found for all load columns at once.
+ *
+ * Unknown is the state (v, rotation, M, S) just right of each station; stations are the beam's start, its supports and releases (and, on
+ * foundations and under axial force, enough places in between that the solution grows little from one to the next). Loads
+ * and section changes are carried along inside and add no unknowns. Each station contributes four conditions that join at most two
+ * states, so the matrix is banded and the cost grows linearly with the number of spans.
+ *
+ * Why this keeps its digits: nothing is expressed by powers of the whole length or as differences of large stiffnesses (a short or
+ * stiff piece gives a transfer matrix near the identity, where a stiffness matrix would hold numbers like EI/h^3); every
+ * span is started afresh from its own support, so errors do not grow from span to span; rows and columns are scaled by powers of two to
+ * numbers without units. Method: multiple shooting with exact propagators (Ascher, Mattheij & Russell, Numerical Solution of Boundary
+ * Value Problems for ODEs, SIAM 1995, section 4.3, cited from memory).
+ */
+import type { BeamModel, Support } from '../beam/model';
+import { BandMatrix } from './band';
+import type { Columns } from './columns';
+import { particular, transfer } from './fields';
+import { noLoad } from './region-load';
+import type { Cut, Region } from './regions';
+
+export interface Station {
+  /** index into the breaks */
+  readonly at: number;
+  readonly support: Support | null;
+  /** index of the support in the model, -1 without */
+  readonly supportIndex: number;
+  readonly hinge: boolean;
+  readonly slide: boolean;
+}
+
+/** Between stations on foundations or under axial force the homogeneous solution may grow by about e^1.5. */
+const MAX_SEGMENT_GROWTH = 1.5;
+
+export function findStations(model: BeamModel, cut: Cut): Station[] {
+  const supports = new Map<number, number>();
+  model.supports.forEach((s, i) => supports.set(s.at, i));
+  const releases = new Map<number, { hinge: boolean; slide: boolean }>();
+  for (const r of model.releases) {
+    const entry = releases.get(r.at) ?? { hinge: false, slide: false };
+    if (r.kind === 'moment') entry.hinge = true;
+    else entry.slide = true;
+    releases.set(r.at, entry);
+  }
+  const stations: Station[] = [];
+  const last = cut.breaks.length - 1;
+  let growth = 0;
+  for (let b = 0; b <= last; b++) {
+    const x = cut.breaks[b]!;
+    const index = supports.get(x) ?? -1;
+    const release = b > 0 && b < last ? releases.get(x) : undefined;
+    const ahead = b < last ? cut.regions[b]!.growth : 0;
+    const grown = growth > 0 && growth + ahead > MAX_SEGMENT_GROWTH;
+    if (b === 0 || b === last || index >= 0 || release || grown) {
+      stations.push({
+        at: b,
+        support: index >= 0 ? model.supports[index]! : null,
+        supportIndex: index,
+        hinge: release?.hinge ?? false,
+        slide: release?.slide ?? false,
+      });
+      growth = 0;
+    }
+    growth += ahead;
+  }
+  return stations;
+}
+
+export interface Closed {
+  readonly stations: readonly Station[];
+  /** state right of station i in column c at [(i*columns + c)*4 ..] */
+  readonly states: Float64Array;
+  /** largest relative residual of the conditions over all columns */
+  readonly conditions: number;
+}
+
+/** Propagates one column through the regions of a segment: y <- T y + p with the jumps at the breaks passed. */
+class Segment {
+  readonly T = new Float64Array(16);
+  readonly p: Float64Array;
+  constructor(columns: number) {
+    this.p = new Float64Array(4 * columns);
+  }
+}
+
+const scratch = new Float64Array(16);
+const vector = new Float64Array(4);
+const load = noLoad();
+
+function buildSegment(
+  regions: readonly Region[],
+  transfers: readonly Float64Array[],
+  columns: Columns,
+  axial: number,
+  first: number,
+  last: number,
+  segment: Segment,
+): void {
+  const { T, p } = segment;
+  const C = columns.count;
+  T.set(transfers[first]!);
+  for (let r = first; r < last; r++) {
+    const R = transfers[r]!;
+    if (r > first) {
+      // T <- R T
+      for (let i = 0; i < 4; i++) {
+        for (let j = 0; j < 4; j++) {
+          let sum = 0;
+          for (let k = 0; k < 4; k++) sum += R[4 * i + k]! * T[4 * k + j]!;
+          scratch[4 * i + j] = sum;
+        }
+      }
+      T.set(scratch);
+    }
+    for (let c = 0; c < C; c++) {
+      const at = 4 * c;
+      if (r > first) {
+        addJump(columns, r, c, axial, p, at);
+        const a = p[at]!;
+        const b = p[at + 1]!;
+        const m = p[at + 2]!;
+        const s = p[at + 3]!;
+        if (a !== 0 || b !== 0 || m !== 0 || s !== 0) {
+          for (let i = 0; i < 4; i++) {
+            p[at + i] = R[4 * i]! * a + R[4 * i + 1]! * b + R[4 * i + 2]! * m + R[4 * i + 3]! * s;
+          }
+        }
+      }
+      if (columns.read(r, c, load)) {
+        particular(regions[r]!, axial, load, vector, 0);
+        for (let i = 0; i < 4; i++) p[at + i]! += vector[i]!;
+      }
+    }
+  }
+}
+
+/** Adds the jumps at break b in column c to a state. An offset between two halves under axial force turns the couple N x offset. */
+export function addJump(
+  columns: Columns,
+  b: number,
+  c: number,
+  axial: number,
+  y: Float64Array,
+  at: number,
+): void {
+  const jumps = columns.jumps;
+  if (!jumps) return;
+  const j = (b * columns.count + c) * 4;
+  y[at]! += jumps[j]!;
+  y[at + 1]! += jumps[j + 1]!;
+  y[at + 2]! += jumps[j + 2]! - axial * jumps[j]!;
+  y[at + 3]! += jumps[j + 3]!;
+}
+
+export function transfers(cut: Cut, axial: number): Float64Array[] {
+  return cut.regions.map((region) => transfer(region, axial));
+}
+
+/** Nearest power of two: scaling by it rounds nothing. */
+function powerOfTwo(x: number): number {
+  return x > 0 && Number.isFinite(x) ? 2 ** Math.round(Math.log2(x)) : 1;
+}
+
+export function close(
+  model: BeamModel,
+  cut: Cut,
+  stations: readonly Station[],
+  columns: Columns,
+  axial: number,
+  matrices: readonly Float64Array[],
+): Closed | null {
+  const n = 4 * (stations.length - 1);
+  const C = columns.count;
+  const band = new BandMatrix(n, 5, 5);
+  const rhs: Float64Array[] = [];
+  for (let c = 0; c < C; c++) rhs.push(new Float64Array(n));
+
+  const length = powerOfTwo((model.end - model.start) / (stations.length - 1));
+  const flexibility = powerOfTwo(meanFlexibility(cut));
+  // unknowns are v/(f L^2), rotation/(f L), M, S L: all of the size of a moment
+  const d = [flexibility * length * length, flexibility * length, 1, 1 / length];
+
+  let row = 0;
+  const put = (station: number, component: number, value: number, rowComponent: number): void => {
+    if (value !== 0) band.set(row, 4 * station + component, (value * d[component]!) / d[rowComponent]!);
+  };
+  const moved = (s: Station, c: number, which: 0 | 1): number =>
+    s.supportIndex >= 0 && columns.moved ? columns.moved[(s.supportIndex * C + c) * 2 + which]! : 0;
+  const jump = (s: Station, c: number, component: number): number => {
+    if (!columns.jumps) return 0;
+    const j = (s.at * C + c) * 4;
+    return component === 2
+      ? columns.jumps[j + 2]! - axial * columns.jumps[j]!
+      : columns.jumps[j + component]!;
+  };
+
+  const segment = new Segment(C);
+  for (let i = 0; i < stations.length; i++) {
+    const station = stations[i]!;
+    const { support, hinge, slide } = station;
+    const left = i > 0;
+    const right = i < stations.length - 1;
+    const held = support?.held ?? false;
+    const clamped = support?.clamped ?? false;
+    const k = held ? 0 : (support?.spring ?? 0);
+    const kr = clamped ? 0 : (support?.rotationalSpring ?? 0);
+    const T = segment.T;
+    if (left) {
+      segment.p.fill(0);
+      buildSegment(cut.regions, matrices, columns, axial, stations[i - 1]!.at, station.at, segment);
+    }
+    /** One condition: sum over the left state (through T) and the right state of the coefficients = given(column). */
+    const condition = (
+      unit: number,
+      onLeft: readonly number[] | null,
+      onRight: readonly number[] | null,
+      given: ((c: number) => number) | null,
+    ): void => {
+      if (onLeft) {
+        for (let j = 0; j < 4; j++) {
+          let sum = 0;
+          for (let m = 0; m < 4; m++) if (onLeft[m] !== 0) sum += onLeft[m]! * T[4 * m + j]!;
+          put(i - 1, j, sum, unit);
+        }
+      }
+      if (onRight) for (let j = 0; j < 4; j++) put(i, j, onRight[j]!, unit);
+      for (let c = 0; c < C; c++) {
+        let value = given ? given(c) : 0;
+        if (onLeft) for (let m = 0; m < 4; m++) value -= onLeft[m]! * segment.p[4 * c + m]!;
+        rhs[c]![row] = value / d[unit]!;
+      }
+      row++;
+    };
+
+    /** S jumps by -P and by the spring's push k (v - ground), v taken left of a dislocation */
+    const onSpring = (c: number): number =>
+      jump(station, c, 3) - k * (moved(station, c, 0) + jump(station, c, 0));
+
+    if (left && right) {
+      if (held) {
+        condition(0, V, null, (c) => moved(station, c, 0));
+        // an influence line's dislocation at a support stands just right of it
+        condition(0, null, V, (c) => moved(station, c, 0) + jump(station, c, 0));
+      } else if (!slide) {
+        condition(0, MINUS_V, V, (c) => jump(station, c, 0));
+      }
+      if (hinge) {
+        condition(2, M, null, null);
+        condition(2, null, M, null);
+      } else {
+        if (clamped) {
+          condition(1, R, null, (c) => moved(station, c, 1));
+          condition(1, null, R, (c) => moved(station, c, 1) + jump(station, c, 1));
+        } else {
+          condition(1, MINUS_R, R, (c) => jump(station, c, 1));
+          // the rotational spring turns the section back: M jumps by -kr (rotation - imposed)
+          condition(
+            2,
+            slide ? [-axial, 0, -1, 0] : MINUS_M,
+            [slide ? axial : 0, kr, 1, 0],
+            (c) => jump(station, c, 2) + kr * (moved(station, c, 1) + jump(station, c, 1)),
+          );
+        }
+      }
+      if (slide) {
+        condition(3, S, null, null);
+        condition(3, null, S, null);
+      } else if (!held) {
+        condition(3, MINUS_S, [-k, 0, 0, 1], onSpring);
+      }
+    } else if (right) {
+      if (held) condition(0, null, V, (c) => moved(station, c, 0) + jump(station, c, 0));
+      else condition(3, null, [-k, 0, 0, 1], onSpring);
+      if (clamped) condition(1, null, R, (c) => moved(station, c, 1) + jump(station, c, 1));
+      else {
+        condition(
+          2,
+          null,
+          [0, kr, 1, 0],
+          (c) => jump(station, c, 2) + kr * (moved(station, c, 1) + jump(station, c, 1)),
+        );
+      }
+    } else {
+      if (held) condition(0, V, null, (c) => moved(station, c, 0) - jump(station, c, 0));
+      else condition(3, [k, 0, 0, 1], null, (c) => k * moved(station, c, 0) - jump(station, c, 3));
+      if (clamped) condition(1, R, null, (c) => moved(station, c, 1) - jump(station, c, 1));
+      else condition(2, [0, -kr, 1, 0], null, (c) => -jump(station, c, 2) - kr * moved(station, c, 1));
+    }
+  }
+
+  if (!(band.factor() > 0)) return null;
+  let conditions = 0;
+  const states = new Float64Array(n * C);
+  for (let c = 0; c < C; c++) {
+    const x = rhs[c]!;
+    conditions = Math.max(conditions, band.solve(x));
+    for (let i = 0; i + 1 < stations.length; i++) {
+      for (let j = 0; j < 4; j++) states[(i * C + c) * 4 + j] = x[4 * i + j]! * d[j]!;
+    }
+  }
+  return { stations, states, conditions };
+}
+
+const V = [1, 0, 0, 0];
+const R = [0, 1, 0, 0];
+const M = [0, 0, 1, 0];
+const S = [0, 0, 0, 1];
+const MINUS_V = [-1, 0, 0, 0];
+const MINUS_R = [0, -1, 0, 0];
+const MINUS_M = [0, 0, -1, 0];
+const MINUS_S = [0, 0, 0, -1];
+
+/** Mean of 1/EI over the beam; only a scale. */
+function meanFlexibility(cut: Cut): number {
+  let sum = 0;
+  for (const region of cut.regions) sum += region.h * (region.fPoly ? region.fPoly[0]! : region.f);
+  return sum / (cut.breaks[cut.breaks.length - 1]! - cut.breaks[0]!);
+}

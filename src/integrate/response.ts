@@ -1,0 +1,308 @@
+/**
+ * The response to one combination: the unit solutions of the load columns added up, and everything that can be asked of the diagrams.
+ *
+ * Diagrams are polynomials per region (see solution.ts, Piece); a value touches only the regions between its station and itself; extremes
+ * come from the roots of the derivative polynomials and from both sides of every break, never from sampling.
+ */
+import type { BeamModel } from '../beam/model';
+import type { Peak, Piece, Quantity, Reaction, Residuals, Response, Sense, Side } from '../solution';
+import { addJump, type Closed } from './closing';
+import type { Columns } from './columns';
+import { integrateRegion, particular } from './fields';
+import { addScaled, bound, derivative, evaluate, rootsIn, type Poly } from './polynomial';
+import { noLoad, type Fields } from './region-load';
+import type { Cut } from './regions';
+
+/** A beam solved for its load columns; shared by all combinations. */
+export interface System {
+  readonly model: BeamModel;
+  readonly cut: Cut;
+  readonly columns: Columns;
+  readonly axial: number;
+  readonly matrices: readonly Float64Array[];
+  readonly closed: Closed;
+  /** station index at the left of each region */
+  readonly segmentOf: Int32Array;
+  readonly residuals: Residuals;
+}
+
+/** Two extremes within this factor of each other are one: the leftmost place is reported, so it does not flicker with rounding. */
+const SAME = 1 + 16 * 2 ** -52;
+
+interface Diagrams extends Fields {
+  /** what is shown: initial shape included in deflection and slope, shear = dM/dx */
+  readonly deflection: Poly;
+  readonly slope: Poly;
+  readonly moment: Poly;
+  readonly shear: Poly;
+}
+
+export class BeamResponse implements Response {
+  readonly residuals: Residuals;
+  private readonly states: Float64Array;
+  private readonly ready: Uint8Array;
+  private readonly diagrams: (Diagrams | undefined)[];
+  private readonly load = noLoad();
+  private readonly end = new Float64Array(4);
+
+  constructor(
+    readonly system: System,
+    private readonly weights: Float64Array,
+  ) {
+    const regions = system.cut.regions.length;
+    this.states = new Float64Array(4 * regions);
+    this.ready = new Uint8Array(system.closed.stations.length);
+    this.diagrams = new Array<Diagrams | undefined>(regions);
+    this.residuals = system.residuals;
+  }
+
+  get breaks(): readonly number[] {
+    return Array.from(this.system.cut.breaks);
+  }
+
+  /** Carries the state through the segment right of a station. */
+  private prepare(segment: number): void {
+    if (this.ready[segment]) return;
+    this.ready[segment] = 1;
+    const { closed, columns, cut } = this.system;
+    const C = columns.count;
+    const first = closed.stations[segment]!.at;
+    const last = closed.stations[segment + 1]!.at;
+    const y = this.end;
+    y.fill(0);
+    for (let c = 0; c < C; c++) {
+      const weight = this.weights[c]!;
+      if (weight === 0) continue;
+      for (let i = 0; i < 4; i++) y[i]! += weight * closed.states[(segment * C + c) * 4 + i]!;
+    }
+    this.states.set(y, 4 * first);
+    for (let r = first; r + 1 < last; r++) {
+      this.step(r, y);
+      this.jump(r + 1, y);
+      this.states.set(y, 4 * (r + 1));
+    }
+    void cut;
+  }
+
+  /** y <- T y + p over region r */
+  private step(r: number, y: Float64Array): void {
+    const { columns, cut, axial, matrices } = this.system;
+    const T = matrices[r]!;
+    const [a, b, m, s] = [y[0]!, y[1]!, y[2]!, y[3]!];
+    columns.accumulate(r, this.weights, this.load);
+    particular(cut.regions[r]!, axial, this.load, y, 0);
+    for (let i = 0; i < 4; i++) {
+      y[i]! += T[4 * i]! * a + T[4 * i + 1]! * b + T[4 * i + 2]! * m + T[4 * i + 3]! * s;
+    }
+  }
+
+  private jump(b: number, y: Float64Array): void {
+    const { columns, axial } = this.system;
+    if (!columns.jumps) return;
+    const total = new Float64Array(4);
+    const one = new Float64Array(4);
+    for (let c = 0; c < columns.count; c++) {
+      if (this.weights[c] === 0) continue;
+      one.fill(0);
+      addJump(columns, b, c, axial, one, 0);
+      for (let i = 0; i < 4; i++) total[i]! += this.weights[c]! * one[i]!;
+    }
+    for (let i = 0; i < 4; i++) y[i]! += total[i]!;
+  }
+
+  /** State at the right end of region r (v, rotation, M, S), just left of the break. */
+  stateAtEnd(r: number): Float64Array {
+    this.prepare(this.system.segmentOf[r]!);
+    const y = this.states.slice(4 * r, 4 * r + 4);
+    this.step(r, y);
+    return y;
+  }
+
+  stateAtStart(r: number): Float64Array {
+    this.prepare(this.system.segmentOf[r]!);
+    return this.states.slice(4 * r, 4 * r + 4);
+  }
+
+  diagram(r: number): Diagrams {
+    const known = this.diagrams[r];
+    if (known) return known;
+    const { columns, cut, axial } = this.system;
+    this.prepare(this.system.segmentOf[r]!);
+    const region = cut.regions[r]!;
+    columns.accumulate(r, this.weights, this.load);
+    const fields = integrateRegion(region, axial, this.load, this.states, 4 * r);
+    let deflection = fields.v;
+    let slope = fields.t;
+    const w = columns.initialShape(r, this.weights);
+    if (w) {
+      const { h, origin } = region;
+      // w(s) = w0 + w1 s + w2 s^2/2 with s = h (u - origin)
+      const c1 = h * (w[1] - w[2] * h * origin);
+      const shape = Float64Array.of(
+        w[0] - h * origin * w[1] + 0.5 * w[2] * h * h * origin * origin,
+        c1,
+        0.5 * w[2] * h * h,
+      );
+      deflection = addScaled(fields.v, shape, 1);
+      slope = addScaled(fields.t, Float64Array.of(c1 / h, w[2] * h), 1);
+    }
+    const shear = axial === 0 ? fields.S : derivative(fields.M).map((c) => c / region.h);
+    const out: Diagrams = { ...fields, deflection, slope, moment: fields.M, shear };
+    this.diagrams[r] = out;
+    return out;
+  }
+
+  private locate(x: number, side: Side): number {
+    const breaks = this.system.cut.breaks;
+    let lo = 0;
+    let hi = breaks.length - 1;
+    // largest lo with breaks[lo] <= x
+    while (hi - lo > 1) {
+      const mid = (lo + hi) >> 1;
+      if (breaks[mid]! <= x) lo = mid;
+      else hi = mid;
+    }
+    if (side === 'left' && x === breaks[lo] && lo > 0) return lo - 1;
+    return lo;
+  }
+
+  value(quantity: Quantity, x: number, side: Side): number {
+    const r = this.locate(x, side);
+    const region = this.system.cut.regions[r]!;
+    const u = x === this.system.cut.breaks[r + 1] ? 1 : (x - region.x0) / region.h;
+    return evaluate(this.diagram(r)[quantity], u + region.origin);
+  }
+
+  peak(quantity: Quantity, sense: Sense, from?: number, to?: number): Peak {
+    const { regions, breaks } = this.system.cut;
+    const a = from ?? breaks[0]!;
+    const b = to ?? breaks[breaks.length - 1]!;
+    const first = this.locate(a, 'right');
+    const last = b > a ? this.locate(b, 'left') : first;
+    let best: Peak | null = null;
+    let rank = -Infinity;
+    const score = (value: number): number =>
+      sense === 'largest' ? Math.abs(value) : sense === 'highest' ? value : -value;
+    for (let r = first; r <= last; r++) {
+      const region = regions[r]!;
+      const poly = this.diagram(r)[quantity];
+      if (best && (sense === 'largest' || rank > 0) && bound(poly, region.origin) <= rank) continue;
+      const u0 = region.origin + (r === first ? Math.max(0, (a - region.x0) / region.h) : 0);
+      const u1 = region.origin + (r === last && b < breaks[r + 1]! ? (b - region.x0) / region.h : 1);
+      const consider = (u: number, side: Side): void => {
+        const value = evaluate(poly, u);
+        const s = score(value);
+        const better = best === null || (s > rank && s - rank > Math.abs(rank) * (SAME - 1));
+        if (!better) return;
+        rank = s;
+        const at =
+          u === region.origin + 1
+            ? breaks[r + 1]!
+            : Math.min(region.x0 + (u - region.origin) * region.h, breaks[r + 1]!);
+        best = { value, at, side };
+      };
+      consider(u0, 'right');
+      for (const u of rootsIn(derivative(poly), u0, u1)) consider(u, 'right');
+      if (u1 > u0) consider(u1, 'left');
+    }
+    return best!;
+  }
+
+  zeros(quantity: Quantity): number[] {
+    const { regions, breaks } = this.system.cut;
+    const out: number[] = [];
+    const scale = Math.abs(this.peak(quantity, 'largest').value);
+    if (scale === 0) return out;
+    // a value this small next to the peak is rounding, not a crossing away from the break
+    const noise = 256 * 2 ** -52 * scale;
+    const add = (x: number): void => {
+      const before = out[out.length - 1];
+      if (before === undefined || x - before > 1e-12 * (breaks[breaks.length - 1]! - breaks[0]!)) out.push(x);
+    };
+    let previous = 0;
+    for (let r = 0; r < regions.length; r++) {
+      const region = regions[r]!;
+      const poly = this.diagram(r)[quantity];
+      if (bound(poly, region.origin) <= noise) {
+        continue;
+      }
+      const start = evaluate(poly, region.origin);
+      const startSign = Math.abs(start) <= noise ? 0 : Math.sign(start);
+      if (previous !== 0 && startSign !== 0 && startSign !== previous) add(region.x0);
+      for (const u of rootsIn(poly, region.origin, region.origin + 1))
+        add(region.x0 + (u - region.origin) * region.h);
+      const end = evaluate(poly, region.origin + 1);
+      if (startSign === 0) add(region.x0);
+      if (Math.abs(end) <= noise) add(breaks[r + 1]!);
+      previous = Math.abs(end) <= noise ? 0 : Math.sign(end);
+    }
+    return out.sort((x, y) => x - y);
+  }
+
+  pieces(quantity: Quantity): readonly Piece[] {
+    return this.system.cut.regions.map((region, r) => ({
+      x0: region.x0,
+      h: region.h,
+      origin: region.origin,
+      coefficients: this.diagram(r)[quantity],
+    }));
+  }
+
+  jumps(quantity: Quantity): readonly number[] {
+    const { breaks, regions } = this.system.cut;
+    const out: number[] = [];
+    const scale = Math.abs(this.peak(quantity, 'largest').value);
+    for (let b = 1; b < breaks.length - 1; b++) {
+      const left = evaluate(this.diagram(b - 1)[quantity], regions[b - 1]!.origin + 1);
+      const right = evaluate(this.diagram(b)[quantity], regions[b]!.origin);
+      // continuity holds to rounding of terms no larger than the peak times a small growth
+      if (Math.abs(right - left) > 1e-11 * scale) out.push(breaks[b]!);
+    }
+    return out;
+  }
+
+  private reactionList: readonly Reaction[] | null = null;
+
+  reactions(): readonly Reaction[] {
+    if (this.reactionList) return this.reactionList;
+    const { closed, columns, axial, cut } = this.system;
+    const C = columns.count;
+    const out: Reaction[] = [];
+    const lastBreak = cut.breaks.length - 1;
+    for (const station of closed.stations) {
+      const support = station.support;
+      if (!support) continue;
+      const b = station.at;
+      const before = b > 0 ? this.stateAtEnd(b - 1) : ZERO;
+      const after = b < lastBreak ? this.stateAtStart(b) : ZERO;
+      const act = new Float64Array(4);
+      this.jump(b, act);
+      let ground = 0;
+      let turned = 0;
+      if (columns.moved) {
+        for (let c = 0; c < C; c++) {
+          ground += this.weights[c]! * columns.moved[(station.supportIndex * C + c) * 2]!;
+          turned += this.weights[c]! * columns.moved[(station.supportIndex * C + c) * 2 + 1]!;
+        }
+      }
+      const v = b > 0 ? before[0]! : after[0]! - act[0]!;
+      const t = b > 0 ? before[1]! : after[1]! - act[1]!;
+      const holdsForce = support.held || support.spring !== 0;
+      const holdsCouple = support.clamped || support.rotationalSpring !== 0;
+      out.push({
+        at: support.at,
+        force: support.held ? after[3]! - before[3]! - act[3]! : support.spring * (v - ground) + 0,
+        couple: support.clamped
+          ? after[2]! - before[2]! - act[2]!
+          : -support.rotationalSpring * (t - turned) + 0,
+        holdsForce,
+        holdsCouple,
+      });
+    }
+    void axial;
+    this.reactionList = out;
+    return out;
+  }
+}
+
+const ZERO = new Float64Array(4);

@@ -1,0 +1,122 @@
+/**
+ * From a beam model to its solution: cut, close, check.
+ *
+ * A first-order beam is solved once for the loads that always act and once for each case (unit solutions, sharing one factorisation);
+ * any combination is their sum. With an axial force the equations depend on the combination (second order), so each combination is
+ * solved by itself; its loads are one column.
+ */
+import type { BeamModel } from '../beam/model';
+import { BeamProblem, type Issue } from '../issue';
+import type { Response, SolveResult, Solution } from '../solution';
+import { close, findStations, transfers } from './closing';
+import { Columns, type Sorting } from './columns';
+import { criticalLoad, passedModes } from './critical';
+import { findMechanism } from './mechanism';
+import { cutBeam } from './regions';
+import { BeamResponse, type System } from './response';
+import { REFUSE, selfCheck } from './self-check';
+
+type Built = { ok: true; system: System } | { ok: false; issue: Issue };
+
+/** So close to its critical load (relative) a deflection has no digits left: refused like one past it. */
+const CRITICAL_MARGIN = 1e-9;
+
+export function solve(model: BeamModel): SolveResult {
+  const mechanism = findMechanism(model);
+  if (mechanism) return { ok: false, issue: mechanism };
+  if (model.loads.some((l) => l.kind === 'axial')) {
+    return { ok: true, solution: new SecondOrder(model) };
+  }
+  const built = build(model, 0, model.cases.length + 1, (load) => ({ column: load.case + 1, factor: 1 }));
+  return built.ok ? { ok: true, solution: new FirstOrder(built.system) } : built;
+}
+
+function build(model: BeamModel, axial: number, count: number, sorting: Sorting): Built {
+  const result = cutBeam(model, axial);
+  if (!result.ok) return result;
+  const { cut } = result;
+  const columns = new Columns(model, cut, count, sorting);
+  const stations = findStations(model, cut);
+  const matrices = transfers(cut, axial);
+  const closed = close(model, cut, stations, columns, axial, matrices);
+  if (!closed) return { ok: false, issue: failed('conditions', Infinity) };
+  const segmentOf = new Int32Array(cut.regions.length);
+  for (let i = 0; i + 1 < stations.length; i++) segmentOf.fill(i, stations[i]!.at, stations[i + 1]!.at);
+  const system = {
+    model,
+    cut,
+    columns,
+    axial,
+    matrices,
+    closed,
+    segmentOf,
+    residuals: { equilibrium: 0, conditions: closed.conditions, energy: 0 },
+  };
+  const residuals = selfCheck(system);
+  for (const [which, residual] of Object.entries(residuals) as [string, number][]) {
+    if (!(residual <= REFUSE)) return { ok: false, issue: failed(which, residual) };
+  }
+  return { ok: true, system: { ...system, residuals } };
+}
+
+function failed(which: string, residual: number): Issue {
+  return {
+    code: 'self-check-failed',
+    kind: 'unavailable',
+    detail: { which, residual: Number.isFinite(residual) ? residual : 'not finite' },
+  };
+}
+
+class FirstOrder implements Solution {
+  private readonly known = new Map<string, Response>();
+  constructor(private readonly system: System) {}
+
+  respond(factors: readonly number[] | null): Response {
+    const key = factors ? factors.join(' ') : '';
+    let response = this.known.get(key);
+    if (!response) {
+      const weights = new Float64Array(this.system.columns.count).fill(1);
+      if (factors) weights.set(factors, 1);
+      response = new BeamResponse(this.system, weights);
+      if (this.known.size >= MAX_RESPONSES) this.known.clear();
+      this.known.set(key, response);
+    }
+    return response;
+  }
+}
+
+/** Responses kept with a solution; more combinations than this in turn are simply formed again. */
+const MAX_RESPONSES = 64;
+
+class SecondOrder implements Solution {
+  private readonly known = new Map<string, Response>();
+  constructor(private readonly model: BeamModel) {}
+
+  respond(factors: readonly number[] | null): Response {
+    const key = factors ? factors.join(' ') : '';
+    const known = this.known.get(key);
+    if (known) return known;
+    const factorOf = (c: number): number => (c < 0 || !factors ? 1 : (factors[c] ?? 0));
+    let axial = 0;
+    for (const l of this.model.loads) if (l.kind === 'axial') axial += factorOf(l.case) * l.force;
+    const refuse = (issue: Issue): never => {
+      throw new BeamProblem([issue], issue.code);
+    };
+    if (axial < 0) {
+      const passed = passedModes(this.model, axial * (1 + CRITICAL_MARGIN));
+      if (passed !== null && passed > 0) {
+        refuse({
+          code: 'past-critical-load',
+          kind: 'unavailable',
+          detail: { critical: criticalLoad(this.model, axial * (1 + 2 * CRITICAL_MARGIN)), applied: -axial },
+        });
+      }
+    }
+    const built = build(this.model, axial, 1, (load) => ({ column: 0, factor: factorOf(load.case) }));
+    if (!built.ok) return refuse(built.issue);
+    const response = new BeamResponse(built.system, Float64Array.of(1));
+    if (this.known.size >= MAX_RESPONSES) this.known.clear();
+    this.known.set(key, response);
+    return response;
+  }
+}
