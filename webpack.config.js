@@ -6,6 +6,7 @@
  *   npm run build -- --env origin=https://host/path    addresses of that place in the manifest and the help links
  *   npm run build -- --env only=addin                  without the workbench, quicker
  */
+const fs = require('node:fs');
 const path = require('node:path');
 const CopyPlugin = require('copy-webpack-plugin');
 const MetadataPlugin = require('custom-functions-metadata-plugin');
@@ -50,8 +51,13 @@ const common = {
 };
 
 function addin(origin) {
+  const paneStands = fs.existsSync(path.join(root, 'taskpane/pane.ts'));
   return {
     ...common,
+    resolve: {
+      ...common.resolve,
+      alias: paneStands ? {} : { [path.join(root, 'taskpane/pane')]: false },
+    },
     name: 'addin',
     cache: { ...common.cache, name: 'addin' },
     entry: {
