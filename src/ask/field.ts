@@ -4,7 +4,7 @@
  * At a jump two segments meet with different values: the extreme is over both limits.
  */
 import type { Piece } from '../solution';
-import { compose, derivative, evaluate, onInterval, rootsInside, type Coefficients } from './polynomial';
+import { compose, derivative, evaluate, onInterval, rootsIn, type Coefficients } from './polynomial';
 
 export interface Segment {
   readonly from: number;
@@ -92,7 +92,7 @@ export function eachInterval(
 /** Calls `take` with the ends of 0..1 and every interior extreme of the polynomial. */
 export function candidates(c: Coefficients, take: (t: number, value: number) => void): void {
   take(0, c[0] as number);
-  for (const t of rootsInside(derivative(c))) take(t, evaluate(c, t));
+  for (const t of rootsIn(derivative(c), 0, 1)) take(t, evaluate(c, t));
   take(1, evaluate(c, 1));
 }
 

@@ -12,6 +12,7 @@
 import type { BeamModel } from '../beam/model';
 import type { Response } from '../solution';
 import { cutSegment, extremes, fieldOf, largestOf, valueAt, type Extreme, type Segment } from './field';
+import { addScaled } from './polynomial';
 import { unitOf, write } from './units';
 
 export interface Span {
@@ -80,12 +81,9 @@ export function sag(field: readonly Segment[], span: Span): Extreme {
     const from = Math.max(segment.from, span.from);
     const to = Math.min(segment.to, span.to);
     if (!(to > from)) continue;
-    const c = Float64Array.from(cutSegment(segment, from, to));
-    const line = c.length < 2 ? new Float64Array(2) : c;
-    if (line !== c) line[0] = c[0] as number;
-    line[0] = (line[0] as number) - (va + slope * (from - a));
-    line[1] = (line[1] as number) - slope * (to - from);
-    relative.push({ from, to, c: line });
+    const chord = [va + slope * (from - a), slope * (to - from)];
+    const c = addScaled(cutSegment(segment, from, to), chord, -1);
+    relative.push({ from, to, c });
   }
   return largestOf(extremes(relative));
 }

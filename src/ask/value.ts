@@ -11,9 +11,6 @@ import { single } from './words';
  * Throws BeamProblem 'outside-beam' when a position is off the beam.
  */
 export function value(open: OpenBeam, quantity: Quantity, x: unknown): number | number[][] {
-  if (typeof x === 'number' && x >= open.model.start && x <= open.model.end) {
-    return open.show(quantity, open.response.value(quantity, x, 'right'));
-  }
   const cell = single(x);
   if (!Array.isArray(cell)) return one(open, quantity, cell);
   return (cell as unknown[]).map((row) =>
@@ -22,8 +19,7 @@ export function value(open: OpenBeam, quantity: Quantity, x: unknown): number | 
 }
 
 function one(open: OpenBeam, quantity: Quantity, raw: unknown): number {
-  const blank = raw === null || raw === undefined || raw === '';
-  const read = readPosition(blank ? 0 : raw, open.model);
+  const read = readPosition(raw, open.model);
   if (!read.ok) return fail(read.issue);
   return open.show(quantity, open.response.value(quantity, read.x, read.side));
 }

@@ -4,6 +4,7 @@
  */
 import type { Issue } from '../issue';
 import { fail } from '../open';
+import { nearest } from '../rows/near';
 
 export const QUANTITIES = ['deflection', 'slope', 'moment', 'shear'] as const;
 /** what an influence line or a train can be asked about: the four quantities and what a support gives */
@@ -60,45 +61,6 @@ export function describe(cell: unknown): string {
   if (Array.isArray(cell)) return 'a range';
   if (typeof cell === 'object') return 'a value that is not a plain number or text';
   return String(cell as string | number | boolean);
-}
-
-/** The word at the smallest edit distance, when that is at most a third of its length (but at least one edit), or it is a beginning. */
-export function nearest<W extends string>(text: string, words: readonly W[]): W | undefined {
-  if (text === '') return undefined;
-  let best: W | undefined;
-  let bestDistance = Infinity;
-  for (const word of words) {
-    const distance = text.length >= 3 && word.startsWith(text) ? 0.5 : edits(text, word);
-    if (distance < bestDistance && distance <= Math.max(1, Math.floor(word.length / 3))) {
-      best = word;
-      bestDistance = distance;
-    }
-  }
-  return best;
-}
-
-/** Levenshtein distance with a swap of neighbours counted as one edit (optimal string alignment). */
-function edits(a: string, b: string): number {
-  let before: number[] = [];
-  let above = Array.from({ length: b.length + 1 }, (_, j) => j);
-  for (let i = 1; i <= a.length; i++) {
-    const row = [i];
-    for (let j = 1; j <= b.length; j++) {
-      const same = a[i - 1] === b[j - 1] ? 0 : 1;
-      let cost = Math.min(
-        (above[j] as number) + 1,
-        (row[j - 1] as number) + 1,
-        (above[j - 1] as number) + same,
-      );
-      if (i > 1 && j > 1 && a[i - 1] === b[j - 2] && a[i - 2] === b[j - 1]) {
-        cost = Math.min(cost, (before[j - 2] as number) + 1);
-      }
-      row.push(cost);
-    }
-    before = above;
-    above = row;
-  }
-  return above[b.length] as number;
 }
 
 /** Spilled diagrams: this many equal steps over the beam when `points` is left out, besides every break. 40 steps draw a smooth curve on any chart. */
