@@ -7,6 +7,23 @@
  * refinement step, which brings the answer to the accuracy of the data even when the elimination lost some digits.
  */
 
+/** Workspace kept between systems: they are solved one after the other, and making large arrays costs more than the elimination. */
+let workspace = new Float64Array(0);
+/** A beam of some thousand spans; larger workspaces are let go. */
+const KEEP = 1 << 20;
+
+function take(size: number): Float64Array {
+  if (workspace.length >= size) {
+    const part = workspace.subarray(0, size);
+    part.fill(0);
+    return part;
+  }
+  const fresh = new Float64Array(size);
+  if (size <= KEEP) workspace = fresh;
+  return fresh;
+}
+
+/** One system at a time: making a second BandMatrix ends the life of the first. */
 export class BandMatrix {
   readonly n: number;
   readonly kl: number;
@@ -14,20 +31,29 @@ export class BandMatrix {
   private readonly width: number;
   /** row r holds columns r-kl .. r+ku (+kl of fill-in) */
   private readonly a: Float64Array;
-  private original: Float64Array | null = null;
+  private readonly original: Float64Array;
   private readonly rowScale: Float64Array;
-  private readonly pivotRow: Int32Array;
+  private readonly pivotRow: Float64Array;
   private readonly lower: Float64Array;
+  private readonly rhs: Float64Array;
+  private readonly residual: Float64Array;
 
   constructor(n: number, kl: number, ku: number) {
     this.n = n;
     this.kl = kl;
     this.ku = ku;
     this.width = kl + ku + 1 + kl;
-    this.a = new Float64Array(n * this.width);
-    this.rowScale = new Float64Array(n);
-    this.pivotRow = new Int32Array(n);
-    this.lower = new Float64Array(n * kl);
+    const size = n * this.width;
+    const all = take(2 * size + n * (kl + 4));
+    let at = 0;
+    const part = (length: number): Float64Array => all.subarray(at, (at += length));
+    this.a = part(size);
+    this.original = part(size);
+    this.lower = part(n * kl);
+    this.rowScale = part(n);
+    this.pivotRow = part(n);
+    this.rhs = part(n);
+    this.residual = part(n);
   }
 
   set(row: number, column: number, value: number): void {
@@ -46,7 +72,7 @@ export class BandMatrix {
       rowScale[r] = scale;
       if (scale !== 1) for (let k = 0; k < width; k++) a[base + k]! *= scale;
     }
-    this.original = a.slice();
+    this.original.set(a);
     let smallest = Infinity;
     for (let c = 0; c < n; c++) {
       const last = Math.min(n - 1, c + kl);
@@ -88,13 +114,11 @@ export class BandMatrix {
 
   /** Solves in place for one right-hand side given in unscaled rows, with one step of refinement. Returns the largest residual relative to the largest row of terms. */
   solve(b: Float64Array): number {
-    const { n, kl, ku, width, rowScale } = this;
-    const original = this.original!;
-    const rhs = new Float64Array(n);
+    const { n, kl, ku, width, rowScale, original, rhs, residual } = this;
     for (let r = 0; r < n; r++) rhs[r] = b[r]! * rowScale[r]!;
-    const x = rhs.slice();
+    const x = b;
+    x.set(rhs);
     this.substitute(x);
-    const residual = new Float64Array(n);
     let worst = 0;
     let scale = 0;
     for (let pass = 0; ; pass++) {
@@ -119,7 +143,6 @@ export class BandMatrix {
       this.substitute(residual);
       for (let r = 0; r < n; r++) x[r]! += residual[r]!;
     }
-    b.set(x);
     return scale > 0 ? worst / scale : 0;
   }
 

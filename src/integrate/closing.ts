@@ -89,7 +89,7 @@ const load = noLoad();
 
 function buildSegment(
   regions: readonly Region[],
-  transfers: readonly Float64Array[],
+  transfers: Float64Array,
   columns: Columns,
   axial: number,
   first: number,
@@ -98,15 +98,15 @@ function buildSegment(
 ): void {
   const { T, p } = segment;
   const C = columns.count;
-  T.set(transfers[first]!);
+  for (let k = 0; k < 16; k++) T[k] = transfers[16 * first + k]!;
   for (let r = first; r < last; r++) {
-    const R = transfers[r]!;
+    const R = 16 * r;
     if (r > first) {
       // T <- R T
       for (let i = 0; i < 4; i++) {
         for (let j = 0; j < 4; j++) {
           let sum = 0;
-          for (let k = 0; k < 4; k++) sum += R[4 * i + k]! * T[4 * k + j]!;
+          for (let k = 0; k < 4; k++) sum += transfers[R + 4 * i + k]! * T[4 * k + j]!;
           scratch[4 * i + j] = sum;
         }
       }
@@ -115,14 +115,19 @@ function buildSegment(
     for (let c = 0; c < C; c++) {
       const at = 4 * c;
       if (r > first) {
-        addJump(columns, r, c, axial, p, at);
+        addJump(columns, r, c, axial, 1, p, at);
         const a = p[at]!;
         const b = p[at + 1]!;
         const m = p[at + 2]!;
         const s = p[at + 3]!;
         if (a !== 0 || b !== 0 || m !== 0 || s !== 0) {
           for (let i = 0; i < 4; i++) {
-            p[at + i] = R[4 * i]! * a + R[4 * i + 1]! * b + R[4 * i + 2]! * m + R[4 * i + 3]! * s;
+            const row = R + 4 * i;
+            p[at + i] =
+              transfers[row]! * a +
+              transfers[row + 1]! * b +
+              transfers[row + 2]! * m +
+              transfers[row + 3]! * s;
           }
         }
       }
@@ -134,26 +139,32 @@ function buildSegment(
   }
 }
 
-/** Adds the jumps at break b in column c to a state. An offset between two halves under axial force turns the couple N x offset. */
+/**
+ * Adds weight x the jumps at break b in column c to a state. An offset between two halves under axial force turns the couple N x offset.
+ */
 export function addJump(
   columns: Columns,
   b: number,
   c: number,
   axial: number,
+  weight: number,
   y: Float64Array,
   at: number,
 ): void {
   const jumps = columns.jumps;
   if (!jumps) return;
   const j = (b * columns.count + c) * 4;
-  y[at]! += jumps[j]!;
-  y[at + 1]! += jumps[j + 1]!;
-  y[at + 2]! += jumps[j + 2]! - axial * jumps[j]!;
-  y[at + 3]! += jumps[j + 3]!;
+  y[at]! += weight * jumps[j]!;
+  y[at + 1]! += weight * jumps[j + 1]!;
+  y[at + 2]! += weight * (jumps[j + 2]! - axial * jumps[j]!);
+  y[at + 3]! += weight * jumps[j + 3]!;
 }
 
-export function transfers(cut: Cut, axial: number): Float64Array[] {
-  return cut.regions.map((region) => transfer(region, axial));
+/** Transfer matrices of all regions, 16 numbers each. */
+export function transfers(cut: Cut, axial: number): Float64Array {
+  const out = new Float64Array(16 * cut.regions.length);
+  cut.regions.forEach((region, r) => transfer(region, axial, out, 16 * r));
+  return out;
 }
 
 /** Nearest power of two: scaling by it rounds nothing. */
@@ -167,13 +178,12 @@ export function close(
   stations: readonly Station[],
   columns: Columns,
   axial: number,
-  matrices: readonly Float64Array[],
+  matrices: Float64Array,
 ): Closed | null {
   const n = 4 * (stations.length - 1);
   const C = columns.count;
   const band = new BandMatrix(n, 5, 5);
-  const rhs: Float64Array[] = [];
-  for (let c = 0; c < C; c++) rhs.push(new Float64Array(n));
+  const rhs = new Float64Array(n * C);
 
   const length = powerOfTwo((model.end - model.start) / (stations.length - 1));
   const flexibility = powerOfTwo(meanFlexibility(cut));
@@ -227,7 +237,7 @@ export function close(
       for (let c = 0; c < C; c++) {
         let value = given ? given(c) : 0;
         if (onLeft) for (let m = 0; m < 4; m++) value -= onLeft[m]! * segment.p[4 * c + m]!;
-        rhs[c]![row] = value / d[unit]!;
+        rhs[c * n + row] = value / d[unit]!;
       }
       row++;
     };
@@ -292,7 +302,7 @@ export function close(
   let conditions = 0;
   const states = new Float64Array(n * C);
   for (let c = 0; c < C; c++) {
-    const x = rhs[c]!;
+    const x = rhs.subarray(c * n, (c + 1) * n);
     conditions = Math.max(conditions, band.solve(x));
     for (let i = 0; i + 1 < stations.length; i++) {
       for (let j = 0; j < 4; j++) states[(i * C + c) * 4 + j] = x[4 * i + j]! * d[j]!;

@@ -61,8 +61,9 @@ export function passedModes(model: BeamModel, axial: number): number | null {
       add(d.tLeft, d.tLeft, s.support.rotationalSpring);
     }
     if (i === 0) continue;
-    let T = matrices[stations[i - 1]!.at]!;
-    for (let r = stations[i - 1]!.at + 1; r < s.at; r++) T = product(matrices[r]!, T);
+    const of = (r: number): Float64Array => matrices.subarray(16 * r, 16 * r + 16);
+    let T = of(stations[i - 1]!.at);
+    for (let r = stations[i - 1]!.at + 1; r < s.at; r++) T = product(of(r), T);
     const k = elementStiffness(T);
     const before = dofs[i - 1]!;
     const map = [before.vRight, before.tRight, d.vLeft, d.tLeft];

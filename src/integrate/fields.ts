@@ -44,31 +44,32 @@ export function integrateRegion(
 
 function prismatic(region: Region, load: RegionLoad, v0: number, t0: number, m0: number, s0: number): Fields {
   const { h, f, g } = region;
-  const { qa, kappa } = load;
-  const dq = load.qb - qa;
-  const S = new Float64Array(dq !== 0 ? 3 : qa !== 0 ? 2 : 1);
-  const n = S.length;
-  const M = new Float64Array(n + 1);
-  const t = new Float64Array(n + 2);
-  const v = new Float64Array(n + 3);
-  S[0] = s0;
-  if (n > 1) S[1] = -h * qa;
-  if (n > 2) S[2] = -0.5 * h * dq;
-  M[0] = m0;
-  for (let k = 0; k < n; k++) M[k + 1] = (h * S[k]!) / (k + 1);
-  t[0] = t0;
-  t[1] = -h * (f * m0 + kappa);
-  for (let k = 1; k <= n; k++) t[k + 1] = (-h * f * M[k]!) / (k + 1);
-  v[0] = v0;
-  for (let k = 0; k <= n + 1; k++) v[k + 1] = (h * (t[k]! + (k < n ? g * S[k]! : 0))) / (k + 1);
-  return { v, t, M, S };
+  const s1 = -h * load.qa;
+  const s2 = -0.5 * h * (load.qb - load.qa);
+  const m1 = h * s0;
+  const m2 = 0.5 * h * s1;
+  const m3 = (h * s2) / 3;
+  const bend = -h * f;
+  const t1 = bend * m0 - h * load.kappa;
+  const t2 = 0.5 * bend * m1;
+  const t3 = (bend * m2) / 3;
+  const t4 = 0.25 * bend * m3;
+  const v1 = h * (t0 + g * s0);
+  const v2 = 0.5 * h * (t1 + g * s1);
+  const v3 = (h * (t2 + g * s2)) / 3;
+  return {
+    S: [s0, s1, s2],
+    M: [m0, m1, m2, m3],
+    t: [t0, t1, t2, t3, t4],
+    v: [v0, v1, v2, v3, 0.25 * h * t3, 0.2 * h * t4],
+  };
 }
 
 function varying(region: Region, load: RegionLoad, v0: number, t0: number, m0: number, s0: number): Fields {
   const { h, origin } = region;
   const S = integrateFrom(loadPolynomial(region, load), origin, -h, s0);
   const M = integrateFrom(S, origin, h, m0);
-  const bending = region.fPoly ? multiply(region.fPoly, M) : M.map((c) => region.f * c);
+  const bending: number[] = region.fPoly ? multiply(region.fPoly, M) : M.map((c) => region.f * c);
   bending[0]! += load.kappa;
   const t = integrateFrom(bending, origin, -h, t0);
   const incline = region.gPoly ? addScaled(multiply(region.gPoly, S), t, 1) : addScaled(t, S, region.g);
@@ -104,33 +105,31 @@ export function particular(
 
 const ZERO = new Float64Array(4);
 
-/** Transfer matrix of a region (row-major 4x4): state at the right end = T x state at the left end, without load. */
-export function transfer(region: Region, axial: number): Float64Array {
-  const T = new Float64Array(16);
+/** Writes the transfer matrix of a region (row-major 4x4) into T[at..]: state at the right end = T x state at the left, without load. */
+export function transfer(region: Region, axial: number, T: Float64Array, at: number): void {
   const { h, f, g } = region;
-  if (!isCoupled(region, axial)) {
-    T[0] = T[5] = T[10] = T[15] = 1;
-    T[1] = h;
-    T[11] = h;
-    if (region.origin === 0 || (!region.fPoly && !region.gPoly)) {
-      T[6] = -h * f;
-      T[2] = 0.5 * h * T[6];
-      T[7] = T[2];
-      T[3] = (-h * h * h * f) / 6 + h * g;
-      return T;
+  const coupled = isCoupled(region, axial);
+  if (!coupled) {
+    T[at] = T[at + 5] = T[at + 10] = T[at + 15] = 1;
+    T[at + 1] = h;
+    T[at + 11] = h;
+    if (!region.fPoly && !region.gPoly) {
+      T[at + 6] = -h * f;
+      T[at + 2] = T[at + 7] = -0.5 * h * h * f;
+      T[at + 3] = (-h * h * h * f) / 6 + h * g;
+      return;
     }
   }
   const none = noLoad();
   const u = region.origin + 1;
-  const unit = new Float64Array(4);
-  for (let j = isCoupled(region, axial) ? 0 : 2; j < 4; j++) {
+  const unit = [0, 0, 0, 0];
+  for (let j = coupled ? 0 : 2; j < 4; j++) {
     unit.fill(0);
     unit[j] = 1;
     const fields = integrateRegion(region, axial, none, unit);
-    T[j] = evaluate(fields.v, u);
-    T[4 + j] = evaluate(fields.t, u);
-    T[8 + j] = evaluate(fields.M, u);
-    T[12 + j] = evaluate(fields.S, u);
+    T[at + j] = evaluate(fields.v, u);
+    T[at + 4 + j] = evaluate(fields.t, u);
+    T[at + 8 + j] = evaluate(fields.M, u);
+    T[at + 12 + j] = evaluate(fields.S, u);
   }
-  return T;
 }

@@ -74,7 +74,7 @@ export function fitPiece(
   }
   let top = N;
   while (top > 0 && Math.abs(c[top]!) <= 2 ** -54 * largest) top--;
-  const poly = new Float64Array(top + 1);
+  const poly = new Array<number>(top + 1).fill(0);
   for (let k = 0; k <= top; k++) {
     const row = powers[k]!;
     for (let i = 0; i < row.length; i++) poly[i]! += c[k]! * row[i]!;

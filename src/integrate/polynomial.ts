@@ -3,7 +3,8 @@
  * Everything the beam's diagrams are made of. Intervals are short and coefficients do not grow, so Horner's rule keeps its digits.
  */
 
-export type Poly = Float64Array;
+/** A plain array: short typed arrays cost far more to make than to use. */
+export type Poly = readonly number[];
 
 export function evaluate(p: Poly, u: number): number {
   let sum = 0;
@@ -13,23 +14,23 @@ export function evaluate(p: Poly, u: number): number {
 
 export function derivative(p: Poly): Poly {
   const n = p.length;
-  if (n <= 1) return new Float64Array(1);
-  const d = new Float64Array(n - 1);
-  for (let k = 1; k < n; k++) d[k - 1] = k * p[k]!;
+  if (n <= 1) return [0];
+  const d: number[] = [];
+  for (let k = 1; k < n; k++) d.push(k * p[k]!);
   return d;
 }
 
 /** start + scale * (integral of p from `from` to u). */
 export function integrateFrom(p: Poly, from: number, scale: number, start: number): Poly {
   const n = p.length;
-  const out = new Float64Array(n + 1);
-  for (let k = 0; k < n; k++) out[k + 1] = (scale * p[k]!) / (k + 1);
+  const out: number[] = [0];
+  for (let k = 0; k < n; k++) out.push((scale * p[k]!) / (k + 1));
   out[0] = from === 0 ? start : start - evaluate(out, from);
   return out;
 }
 
-export function multiply(p: Poly, q: Poly): Poly {
-  const out = new Float64Array(p.length + q.length - 1);
+export function multiply(p: Poly, q: Poly): number[] {
+  const out = new Array<number>(p.length + q.length - 1).fill(0);
   for (let i = 0; i < p.length; i++) {
     const a = p[i]!;
     if (a !== 0) for (let j = 0; j < q.length; j++) out[i + j]! += a * q[j]!;
@@ -38,9 +39,9 @@ export function multiply(p: Poly, q: Poly): Poly {
 }
 
 /** p + scale * q */
-export function addScaled(p: Poly, q: Poly, scale: number): Poly {
-  const out = new Float64Array(Math.max(p.length, q.length));
-  out.set(p);
+export function addScaled(p: Poly, q: Poly, scale: number): number[] {
+  const out = p.slice();
+  while (out.length < q.length) out.push(0);
   for (let k = 0; k < q.length; k++) out[k]! += scale * q[k]!;
   return out;
 }
@@ -111,7 +112,7 @@ export function rootsIn(p: Poly, a: number, b: number): number[] {
     const root = -p[0]! / p[1]!;
     return root >= a && root <= b ? [root] : [];
   }
-  const q = n === p.length ? p : p.subarray(0, n);
+  const q = n === p.length ? p : p.slice(0, n);
   const turning = rootsIn(derivative(q), a, b);
   const roots: number[] = [];
   let x0 = a;

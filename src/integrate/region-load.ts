@@ -32,7 +32,6 @@ export function noLoad(): RegionLoad {
 /** The distributed load of a region in its own coordinate u. */
 export function loadPolynomial(region: Region, load: RegionLoad): Poly {
   const { qa, qb, qPoly } = load;
-  const linear =
-    region.origin === 0 ? Float64Array.of(qa, qb - qa) : Float64Array.of(0.5 * (qa + qb), qb - qa);
+  const linear = region.origin === 0 ? [qa, qb - qa] : [0.5 * (qa + qb), qb - qa];
   return qPoly ? addScaled(qPoly, linear, 1) : linear;
 }

@@ -10,7 +10,7 @@ import { addJump, type Closed } from './closing';
 import type { Columns } from './columns';
 import { integrateRegion, particular } from './fields';
 import { addScaled, bound, derivative, evaluate, rootsIn, type Poly } from './polynomial';
-import { noLoad, type Fields } from './region-load';
+import { noLoad } from './region-load';
 import type { Cut } from './regions';
 
 /** A beam solved for its load columns; shared by all combinations. */
@@ -19,7 +19,8 @@ export interface System {
   readonly cut: Cut;
   readonly columns: Columns;
   readonly axial: number;
-  readonly matrices: readonly Float64Array[];
+  /** transfer matrices, 16 numbers per region */
+  readonly matrices: Float64Array;
   readonly closed: Closed;
   /** station index at the left of each region */
   readonly segmentOf: Int32Array;
@@ -29,7 +30,7 @@ export interface System {
 /** Two extremes within this factor of each other are one: the leftmost place is reported, so it does not flicker with rounding. */
 const SAME = 1 + 16 * 2 ** -52;
 
-interface Diagrams extends Fields {
+interface Diagrams {
   /** what is shown: initial shape included in deflection and slope, shear = dM/dx */
   readonly deflection: Poly;
   readonly slope: Poly;
@@ -64,7 +65,7 @@ export class BeamResponse implements Response {
   private prepare(segment: number): void {
     if (this.ready[segment]) return;
     this.ready[segment] = 1;
-    const { closed, columns, cut } = this.system;
+    const { closed, columns } = this.system;
     const C = columns.count;
     const first = closed.stations[segment]!.at;
     const last = closed.stations[segment + 1]!.at;
@@ -81,33 +82,29 @@ export class BeamResponse implements Response {
       this.jump(r + 1, y);
       this.states.set(y, 4 * (r + 1));
     }
-    void cut;
   }
 
   /** y <- T y + p over region r */
   private step(r: number, y: Float64Array): void {
     const { columns, cut, axial, matrices } = this.system;
-    const T = matrices[r]!;
-    const [a, b, m, s] = [y[0]!, y[1]!, y[2]!, y[3]!];
+    const a = y[0]!;
+    const b = y[1]!;
+    const m = y[2]!;
+    const s = y[3]!;
     columns.accumulate(r, this.weights, this.load);
     particular(cut.regions[r]!, axial, this.load, y, 0);
     for (let i = 0; i < 4; i++) {
-      y[i]! += T[4 * i]! * a + T[4 * i + 1]! * b + T[4 * i + 2]! * m + T[4 * i + 3]! * s;
+      const row = 16 * r + 4 * i;
+      y[i]! += matrices[row]! * a + matrices[row + 1]! * b + matrices[row + 2]! * m + matrices[row + 3]! * s;
     }
   }
 
   private jump(b: number, y: Float64Array): void {
     const { columns, axial } = this.system;
     if (!columns.jumps) return;
-    const total = new Float64Array(4);
-    const one = new Float64Array(4);
     for (let c = 0; c < columns.count; c++) {
-      if (this.weights[c] === 0) continue;
-      one.fill(0);
-      addJump(columns, b, c, axial, one, 0);
-      for (let i = 0; i < 4; i++) total[i]! += this.weights[c]! * one[i]!;
+      if (this.weights[c] !== 0) addJump(columns, b, c, axial, this.weights[c]!, y, 0);
     }
-    for (let i = 0; i < 4; i++) y[i]! += total[i]!;
   }
 
   /** State at the right end of region r (v, rotation, M, S), just left of the break. */
@@ -138,16 +135,12 @@ export class BeamResponse implements Response {
       const { h, origin } = region;
       // w(s) = w0 + w1 s + w2 s^2/2 with s = h (u - origin)
       const c1 = h * (w[1] - w[2] * h * origin);
-      const shape = Float64Array.of(
-        w[0] - h * origin * w[1] + 0.5 * w[2] * h * h * origin * origin,
-        c1,
-        0.5 * w[2] * h * h,
-      );
+      const shape = [w[0] - h * origin * w[1] + 0.5 * w[2] * h * h * origin * origin, c1, 0.5 * w[2] * h * h];
       deflection = addScaled(fields.v, shape, 1);
-      slope = addScaled(fields.t, Float64Array.of(c1 / h, w[2] * h), 1);
+      slope = addScaled(fields.t, [c1 / h, w[2] * h], 1);
     }
     const shear = axial === 0 ? fields.S : derivative(fields.M).map((c) => c / region.h);
-    const out: Diagrams = { ...fields, deflection, slope, moment: fields.M, shear };
+    const out: Diagrams = { deflection, slope, moment: fields.M, shear };
     this.diagrams[r] = out;
     return out;
   }
@@ -244,7 +237,7 @@ export class BeamResponse implements Response {
       x0: region.x0,
       h: region.h,
       origin: region.origin,
-      coefficients: this.diagram(r)[quantity],
+      coefficients: Float64Array.from(this.diagram(r)[quantity]),
     }));
   }
 
@@ -265,7 +258,7 @@ export class BeamResponse implements Response {
 
   reactions(): readonly Reaction[] {
     if (this.reactionList) return this.reactionList;
-    const { closed, columns, axial, cut } = this.system;
+    const { closed, columns, cut } = this.system;
     const C = columns.count;
     const out: Reaction[] = [];
     const lastBreak = cut.breaks.length - 1;
@@ -299,7 +292,6 @@ export class BeamResponse implements Response {
         holdsCouple,
       });
     }
-    void axial;
     this.reactionList = out;
     return out;
   }

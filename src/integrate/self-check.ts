@@ -137,8 +137,8 @@ function checkColumn(system: System, column: number, weights: Float64Array): [nu
     const q = loadPolynomial(region, load);
     const soil = region.k !== 0 ? fields.v.map((a) => -region.k * a) : null;
     const net = soil ? addScaled(q, soil, 1) : q;
-    const one = Float64Array.of(1);
-    const lever = Float64Array.of(x - h * o, h);
+    const one = [1];
+    const lever = [x - h * o, h];
     const resultant = h * productIntegral(net, one, o);
     force.add(resultant);
     moment.add(h * productIntegral(net, lever, o));
@@ -154,7 +154,7 @@ function checkColumn(system: System, column: number, weights: Float64Array): [nu
     if (axial !== 0) {
       // v' + w' along the region, and the shear strain v' - rotation
       const incline = derivative(fields.v).map((a) => a / h);
-      const initial = Float64Array.of(load.w1 - load.w2 * h * o, load.w2 * h);
+      const initial = [load.w1 - load.w2 * h * o, load.w2 * h];
       const total = addScaled(incline, initial, 1);
       work.add(-h * axial * productIntegral(total, fields.t, o));
       const strain = addScaled(incline, fields.t, -1);

@@ -156,5 +156,6 @@ function expand(
     if (quiet >= 4 && next >= least) break;
   }
   const length = Math.min(n + 1, MAX_TERMS + 1);
-  return { v: v.slice(0, length), t: t.slice(0, length), M: m.slice(0, length), S: s.slice(0, length) };
+  const take = (from: Float64Array): number[] => Array.from(from.subarray(0, length));
+  return { v: take(v), t: take(t), M: take(m), S: take(s) };
 }
