@@ -39,6 +39,8 @@ const common = {
             parser: { syntax: 'typescript', tsx: true },
             target: 'es2020',
             transform: { react: { runtime: 'automatic' } },
+            // plain assignments: without this every field of every object goes through defineProperty
+            assumptions: { setPublicClassFields: true },
           },
           module: { type: 'es6' },
         },
