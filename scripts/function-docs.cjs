@@ -6,13 +6,7 @@ const fs = require('node:fs');
 const path = require('node:path');
 const ts = require('typescript');
 
-/**
- * @typedef {{ name: string, text: string, optional: boolean, words: { word: string, text: string }[] }} ParameterDoc
- * @typedef {{ id: string, page: string, text: string, example: string, returns: string, parameters: ParameterDoc[],
- *   examples: { formula: string, text: string }[], signature: string, theme: string }} FunctionDoc
- */
-
-/** @returns {FunctionDoc[]} in the order of functions/files.json */
+/** The functions in the order of functions/files.json */
 function readFunctionDocs(root) {
   const files = JSON.parse(fs.readFileSync(path.join(root, 'functions/files.json'), 'utf8'));
   return files.flatMap((file) => readFile(path.join(root, file)));

@@ -14,7 +14,7 @@ const THEMES = {
 const CAUTION =
   'Linear elastic small-deflection theory; for review by a qualified engineer. Local codes and licensed practice decide limits, loads and combinations.';
 
-/** @param {import('./function-docs.cjs').FunctionDoc[]} docs @returns {[file: string, content: string][]} */
+/** The pages as pairs of file name and content; their types stand in help-pages.d.cts. */
 function helpPages(docs, root) {
   return [
     ['help.css', fs.readFileSync(path.join(root, 'scripts/help.css'), 'utf8')],

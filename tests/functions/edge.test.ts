@@ -84,7 +84,7 @@ it('whole results pass unchanged, but minus zero is zero', () => {
     ),
   ).toBe(true);
   expect(
-    matrix(() => [
+    matrix<string | number | boolean>(() => [
       ['x', 1],
       ['y', true],
     ]),
