@@ -2,7 +2,7 @@
  * The two parts of mathjs that the row language uses, made from their factories so that nothing else of the library is
  * shipped: the expression parser, given our own node classes, and the Unit class, given plain number arithmetic.
  */
-import * as factories from 'mathjs';
+import { createParse, createUnitClass } from 'mathjs';
 
 /** The parser fills in these classes; a class that throws makes its construct unreachable. */
 export interface NodeClasses {
@@ -48,11 +48,12 @@ export interface MathUnitClass {
   ): unknown;
 }
 
-// The factories are documented exports of mathjs but missing from its type declarations.
-const { createParse, createUnitClass } = factories as unknown as {
-  createParse(parts: object): (text: string) => object;
-  createUnitClass(parts: object): MathUnitClass;
-};
+// The factories are documented exports of mathjs but missing from its type declarations. They are imported by name, so that
+// the bundler can leave the rest of the library out.
+declare module 'mathjs' {
+  export function createParse(parts: object): (text: string) => object;
+  export function createUnitClass(parts: object): MathUnitClass;
+}
 
 const config = { number: 'number', predictable: false, relTol: 1e-12, absTol: 1e-15 };
 
