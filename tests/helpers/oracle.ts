@@ -15,7 +15,7 @@
 import type { BeamModel, Law } from '../../src/beam/model';
 import type { Quantity, Side } from '../../src/solution';
 import { Element, type Field, type Series } from './oracle-element';
-import { Big, withBits } from './oracle-number';
+import { Big, currentBits, withBits } from './oracle-number';
 import { lawSeries, variesLittle } from './oracle-law';
 
 export interface OracleReaction {
@@ -305,6 +305,7 @@ function build(model: BeamModel, factors: readonly number[] | null, breaks: numb
 /** Symmetric banded elimination with some unknowns prescribed; null when a pivot is not positive. */
 function eliminate(rows: Map<number, Big>[], right: Big[], held: ReadonlyMap<number, Big>): Big[] | null {
   const n = rows.length;
+  const own = rows.map((row, i) => row.get(i)?.magnitude ?? -Infinity);
   for (const [j, value] of held) {
     for (const [i] of rows[j]!) {
       if (held.has(i)) continue;
@@ -316,7 +317,8 @@ function eliminate(rows: Map<number, Big>[], right: Big[], held: ReadonlyMap<num
     if (held.has(p)) continue;
     const row = rows[p]!;
     const pivot = row.get(p);
-    if (!pivot || pivot.sign <= 0) return null;
+    // what is left of a singular pivot is rounding: some 2^-bits of the diagonal; a real one keeps more than half of its digits
+    if (!pivot || pivot.sign <= 0 || pivot.magnitude < own[p]! - 0.6 * currentBits()) return null;
     for (const [i] of row) {
       if (i <= p) continue;
       const factor = row.get(i)!.over(pivot);
