@@ -2,6 +2,7 @@
  * The only door of the engine: functions/, taskpane/ and workbench/ import from here and from nowhere else in src/.
  */
 export * as ask from './ask';
+export { cautionsOf } from './ask/readback';
 export { spansOf, spanName, type Span } from './ask/spans';
 export { namedPositions } from './ask/profile';
 export { supportName } from './ask/reactions';

@@ -43,6 +43,9 @@ export interface Review {
   readonly issues: readonly Issue[];
   readonly model: BeamModel | null;
   readonly open: OpenBeam | null;
+  /** how the rows were read and what looks odd; there as soon as the rows are right, also when the beam cannot be solved */
+  readonly readings: readonly Reading[];
+  readonly cautions: readonly Issue[];
 }
 
 /** Bounds of the memo: tables seen, and members (a table with its names and values) kept solved. */
@@ -207,14 +210,16 @@ export function openBeam(args: BeamArguments): OpenBeam {
 /** The same without ever throwing: for READBACK and the pane, which show what is wrong beside what is right. */
 export function reviewBeam(args: BeamArguments): Review {
   const member = memberOf(args);
-  let open: OpenBeam | null = null;
+  const { table, model } = member;
+  const readings = member.source?.readings ?? [];
+  const cautions = member.source?.cautions ?? [];
   try {
-    open = member.open(args.combination);
+    const open = member.open(args.combination);
     void open.response; // a beam that cannot be answered is an issue here, not a surprise later
-    return { table: member.table, issues: [], model: member.model, open };
+    return { table, issues: [], model, open, readings, cautions };
   } catch (problem) {
     if (!(problem instanceof BeamProblem)) throw problem;
-    return { table: member.table, issues: problem.issues, model: member.model, open: null };
+    return { table, issues: problem.issues, model, open: null, readings, cautions };
   }
 }
 

@@ -10,7 +10,7 @@ import type { BeamModel, Combination, Limit } from '../beam/model';
 import { fail, type OpenBeam } from '../open';
 import { readLimit } from '../rows';
 import type { Solution } from '../solution';
-import { deflectionField, sag, spanName, spansOf, type Span } from './spans';
+import { sag, spanName, spansOf, type Span } from './spans';
 import { heading, unitOf, write } from './units';
 import { single } from './words';
 
@@ -60,9 +60,9 @@ export function verdicts(model: BeamModel, solution: Solution, tests: readonly T
   const spans = spansOf(model);
   const found: Verdict[] = [];
   for (const test of tests) {
-    const field = deflectionField(solution.respond(test.combination?.factors ?? null));
+    const response = solution.respond(test.combination?.factors ?? null);
     for (const span of spans) {
-      const worst = sag(field, span);
+      const worst = sag(response, span);
       const allowed = allowedOf(model, span, test);
       found.push({
         span,

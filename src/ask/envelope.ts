@@ -13,7 +13,8 @@ import { candidates, eachInterval, fieldOf, sortedOnce, valueAt, type Segment } 
 import { layersOf, partLoads, type Layer } from './pattern';
 import { addScaled, compose, evaluate, rootsIn, type Coefficients } from './polynomial';
 import { namedPositions, spread, withJumps } from './profile';
-import { heading, unitOf, write } from './units';
+import { quiet } from './quiet';
+import { heading, unitOf } from './units';
 import { describe, isBlank, QUANTITIES, readPoints, readWord } from './words';
 
 /**
@@ -44,10 +45,12 @@ export function envelope(
       heading(`highest ${what}`, unitOf(model, what)),
     ],
   ];
-  for (const { x, side } of withJumps(model, positions, jumps)) {
-    const { low, high } = boundsAt(layers, x, side === 'left');
-    rows.push([x, plain(low), plain(high)]);
-  }
+  const bounds = withJumps(model, positions, jumps).map(({ x, side }) => ({
+    x,
+    ...boundsAt(layers, x, side === 'left'),
+  }));
+  const peak = bounds.reduce((most, { low, high }) => Math.max(most, -low, high), 0);
+  for (const { x, low, high } of bounds) rows.push([x, plain(quiet(low, peak)), plain(quiet(high, peak))]);
   return rows;
 }
 

@@ -22,9 +22,20 @@ import { fail, type OpenBeam } from '../open';
 import { readPosition } from '../rows';
 import { plain } from '../signs';
 import type { Response, Side } from '../solution';
-import { cutSegment, fieldOf, segmentAt, sortedOnce, unionOfBreaks, valueAt, type Segment } from './field';
+import {
+  cutSegment,
+  extremes,
+  fieldOf,
+  largestOf,
+  segmentAt,
+  sortedOnce,
+  unionOfBreaks,
+  valueAt,
+  type Segment,
+} from './field';
 import { addScaled, compose, type Coefficients } from './polynomial';
 import { namedPositions, spread, withJumps } from './profile';
+import { quiet } from './quiet';
 import { samePlace } from './reactions';
 import { heading, unitOf, write } from './units';
 import { EFFECTS, readPoints, readWord, single, type Effect } from './words';
@@ -250,6 +261,7 @@ export function influence(
   );
   if (effect === 'shear') jumps.add(section.x);
   const positions = spread(model, sortedOnce([...named, section.x, ...jumps]), count);
+  const peak = largestOf(extremes(field)).value;
   const unit = unitOf(model, effect);
   const force = model.units === null ? '' : `per ${model.units.force}`;
   const rows: (number | string)[][] = [
@@ -259,7 +271,7 @@ export function influence(
     ],
   ];
   for (const place of withJumps(model, positions, jumps)) {
-    rows.push([place.x, plain(factor * valueAt(field, place.x, place.side === 'left'))]);
+    rows.push([place.x, plain(factor * quiet(valueAt(field, place.x, place.side === 'left'), peak))]);
   }
   return rows;
 }

@@ -8,6 +8,7 @@ import type { BeamModel } from '../beam/model';
 import type { OpenBeam } from '../open';
 import type { Quantity, Response, Side } from '../solution';
 import { sortedOnce } from './field';
+import { quiet } from './quiet';
 import { heading, unitOf } from './units';
 import { QUANTITIES, readPoints } from './words';
 
@@ -78,8 +79,10 @@ export function profile(open: OpenBeam, points?: unknown): (number | string)[][]
       ...order.map((quantity) => heading(quantity, unitOf(model, quantity))),
     ],
   ];
+  const peaks = order.map((quantity) => response.peak(quantity, 'largest').value);
   for (const { x, side } of withJumps(model, positions, jumps)) {
-    rows.push([x, ...order.map((quantity) => open.show(quantity, response.value(quantity, x, side)))]);
+    const values = order.map((quantity, i) => quiet(response.value(quantity, x, side), peaks[i] as number));
+    rows.push([x, ...order.map((quantity, i) => open.show(quantity, values[i] as number))]);
   }
   return rows;
 }

@@ -67,14 +67,19 @@ export function spanName(model: BeamModel, span: Span): string {
   return `${span.kind} ${ends} (counts as 2 × ${write(span.to - span.from)}${tail})`;
 }
 
+/** A held support moves by rounding of the solve: less than this fraction of the peak is no displacement. */
+const STILL = 256 * Number.EPSILON;
+
 /** Deflection from the chord, of largest magnitude within the span; model signs and length unit. */
-export function sag(field: readonly Segment[], span: Span): Extreme {
+export function sag(response: Response, span: Span): Extreme {
+  const plain = response.peak('deflection', 'largest', span.from, span.to);
   const [a, b] = span.chord;
-  if (a === undefined) return largestOf(extremes(field, span.from, span.to));
+  if (a === undefined) return plain;
+  const field = fieldOf(response.pieces('deflection'));
   // the supports' own displacements, taken from inside the span (a shear release may stand on the support)
   const va = valueAt(field, a, a === span.to);
   const vb = b === undefined ? va : valueAt(field, b, true);
-  if (va === 0 && vb === 0) return largestOf(extremes(field, span.from, span.to));
+  if (Math.max(Math.abs(va), Math.abs(vb)) <= STILL * Math.abs(plain.value)) return plain;
   const slope = b === undefined ? 0 : (vb - va) / (b - a);
   const relative: Segment[] = [];
   for (const segment of field) {
@@ -86,9 +91,4 @@ export function sag(field: readonly Segment[], span: Span): Extreme {
     relative.push({ from, to, c });
   }
   return largestOf(extremes(relative));
-}
-
-/** The deflection field of a response, cut no finer than the engine gives it. */
-export function deflectionField(response: Response): Segment[] {
-  return fieldOf(response.pieces('deflection'));
 }
