@@ -37,11 +37,11 @@ export function readNumberText(raw: string): NumberText | null {
 
 /**
  * "12 kN/m" -> number part and the rest. Only a text that begins with a number and goes on with a letter is split: a product
- * is never written without its `*`, so the rest can only be a unit.
+ * is never written without its `*`, so the rest can only be a unit. (The e of 12e-6*28 is an exponent, not a unit.)
  */
 export function splitQuantity(text: string): { readonly number: string; readonly unit: string } | null {
   const match =
-    /^([+\-\u2212\u2013]?\s*(?:\d[\d.,\u0020\u00a0\u2007\u2009\u202f]*|[.,]\d+)(?:[eE][+-]?\d{1,3})?)\s*([A-Za-z\u00b5\u03bc\u00b0(].*)$/s.exec(
+    /^([+\-\u2212\u2013]?\s*(?:\d[\d.,\u0020\u00a0\u2007\u2009\u202f]*|[.,]\d+)(?:[eE][+-]?\d{1,3})?)\s*(?![eE][+-]?\d)([A-Za-z\u00b5\u03bc\u00b0(].*)$/s.exec(
       text,
     );
   if (match === null || (match[2]!.startsWith('(') && !/[A-Za-z]/.test(match[2]!))) return null;
