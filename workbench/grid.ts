@@ -38,7 +38,7 @@ export function createGrid(container: HTMLElement, bundle: FunctionsBundle): Gri
   });
   const preset = UniverSheetsCorePreset({
     container,
-    header: false,
+    header: true, // the row with the formula bar
     toolbar: false,
     footer: { sheetBar: true, statisticBar: true, menus: false, zoomSlider: true },
     disableAutoFocus: true,

@@ -10,7 +10,12 @@ import { CalculationMode, UniverSheetsFormulaPlugin } from '@univerjs/sheets-for
 import { evaluateBundle, type FunctionsBundle } from './bundle';
 import { Book } from './book';
 import { createHost, type BlankCells } from './host';
+import { demoWorkbook } from './demo';
 import { switchOffColumnIndex } from './tuning';
+import { cellName } from './xlsx/address';
+import { callsSpanrow } from './xlsx/formula-text';
+import { readXlsx } from './xlsx/read';
+import { writeXlsx } from './xlsx/write';
 
 export interface HeadlessOptions {
   readonly blankCells?: BlankCells;
@@ -36,5 +41,5 @@ export function createHeadless(bundle: FunctionsBundle, options: HeadlessOptions
   return { book, dispose: () => univer.dispose() };
 }
 
-export { evaluateBundle };
+export { evaluateBundle, callsSpanrow, cellName, demoWorkbook, readXlsx, writeXlsx };
 export type { Book, BlankCells, FunctionsBundle };
