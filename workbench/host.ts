@@ -47,6 +47,8 @@ export interface FunctionHost {
   blankCells: BlankCells;
   /** number of calls and time spent in the bundle's functions since the last reset, for the bench and the status line */
   spent: { calls: number; milliseconds: number };
+  /** hears of every call, for progress on long files */
+  onCall: ((calls: number) => void) | null;
   /** begins a calculation: messages of earlier ones are dropped as their cells are computed again */
   beginRun(): void;
   /** the sentence that came with the error of a cell's own call, or null */
@@ -66,6 +68,7 @@ export function createHost(bundle: FunctionsBundle, options: { blankCells?: Blan
     descriptions: bundle.metadata.map((one) => describeFunction(bundle.namespace, one)),
     blankCells: options.blankCells ?? 'zero',
     spent: { calls: 0, milliseconds: 0 },
+    onCall: null,
     beginRun: () => void (run += 1),
     messageAt: (cell) => messages.get(keyOf(cell))?.text ?? null,
   };
@@ -87,6 +90,7 @@ export function createHost(bundle: FunctionsBundle, options: { blankCells?: Blan
         const outcome = call(values);
         host.spent.calls += 1;
         host.spent.milliseconds += now() - started;
+        host.onCall?.(host.spent.calls);
         note(this, outcome.message);
         return outcome.value;
       }

@@ -27,7 +27,7 @@ function byId(id: string): HTMLElement {
 /** The demo workbook as the build left it beside the page; an empty one where there is none. */
 async function openStart(book: Book): Promise<string> {
   const blank = new URLSearchParams(location.search).has('blank');
-  const response = blank ? null : await fetch('demo.json');
+  const response = blank ? null : await fetch('covered-market.json');
   if (response === null || !response.ok) {
     await book.open({ id: 'blank', name: UNTITLED, sheetOrder: ['s1'], sheets: { s1: { id: 's1', name: 'Sheet1' } } });
     return UNTITLED;

@@ -3,6 +3,7 @@
  * bundle at run time, so they test the file that ships. Nothing built here is part of the add-in.
  */
 const path = require('node:path');
+const CopyPlugin = require('copy-webpack-plugin');
 const HtmlWebpackPlugin = require('html-webpack-plugin');
 const MiniCssExtractPlugin = require('mini-css-extract-plugin');
 const { IgnorePlugin } = require('webpack');
@@ -57,6 +58,8 @@ module.exports = (env = {}, argv = {}) => {
       hyphenation,
       new HtmlWebpackPlugin({ template: './workbench/index.html', scriptLoading: 'defer' }),
       new MiniCssExtractPlugin({ filename: '[name].css', chunkFilename: '[name].css', ignoreOrder: true }),
+      // written by `npm run demo`
+      new CopyPlugin({ patterns: [{ from: 'workbench/demo/covered-market.*', to: '[name][ext]' }] }),
     ],
   };
 

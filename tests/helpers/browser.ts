@@ -14,7 +14,7 @@ import { chromium, type Browser, type BrowserContextOptions, type Page } from 'p
 export const DIST = path.resolve(__dirname, '../../dist');
 
 const CANDIDATES = [
-  process.env.CHROMIUM_PATH ?? '',
+  process.env.CHROMIUM ?? process.env.CHROMIUM_PATH ?? '',
   '/usr/bin/chromium',
   '/usr/bin/chromium-browser',
   '/usr/bin/google-chrome',
@@ -46,7 +46,7 @@ export function describeInBrowser(name: string, body: () => void): void {
 /** Starts Chromium so that neither the page nor the browser itself can reach anything but this machine. */
 export async function launchBrowser(): Promise<Browser> {
   const executablePath = findBrowser();
-  if (executablePath === null) throw new Error('No Chromium found: set CHROMIUM_PATH to the browser to use.');
+  if (executablePath === null) throw new Error('No Chromium found: set CHROMIUM to the browser to use.');
   return chromium.launch({
     executablePath,
     headless: true,
