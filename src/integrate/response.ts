@@ -258,8 +258,7 @@ export class BeamResponse implements Response {
 
   reactions(): readonly Reaction[] {
     if (this.reactionList) return this.reactionList;
-    const { closed, columns, cut } = this.system;
-    const C = columns.count;
+    const { closed, axial, cut } = this.system;
     const out: Reaction[] = [];
     const lastBreak = cut.breaks.length - 1;
     for (const station of closed.stations) {
@@ -270,24 +269,15 @@ export class BeamResponse implements Response {
       const after = b < lastBreak ? this.stateAtStart(b) : ZERO;
       const act = new Float64Array(4);
       this.jump(b, act);
-      let ground = 0;
-      let turned = 0;
-      if (columns.moved) {
-        for (let c = 0; c < C; c++) {
-          ground += this.weights[c]! * columns.moved[(station.supportIndex * C + c) * 2]!;
-          turned += this.weights[c]! * columns.moved[(station.supportIndex * C + c) * 2 + 1]!;
-        }
-      }
-      const v = b > 0 ? before[0]! : after[0]! - act[0]!;
-      const t = b > 0 ? before[1]! : after[1]! - act[1]!;
       const holdsForce = support.held || support.spring !== 0;
       const holdsCouple = support.clamped || support.rotationalSpring !== 0;
+      // A sliding joint's axial force turns the couple N x offset. The jumps keep their digits for soft and for stiff springs alike;
+      // k x v would lose those of a stiff one.
+      const opened = station.slide ? axial * (after[0]! - before[0]!) : 0;
       out.push({
         at: support.at,
-        force: support.held ? after[3]! - before[3]! - act[3]! : support.spring * (v - ground) + 0,
-        couple: support.clamped
-          ? after[2]! - before[2]! - act[2]!
-          : -support.rotationalSpring * (t - turned) + 0,
+        force: holdsForce ? after[3]! - before[3]! - act[3]! : 0,
+        couple: holdsCouple ? after[2]! - before[2]! - act[2]! + opened : 0,
         holdsForce,
         holdsCouple,
       });

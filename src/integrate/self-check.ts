@@ -1,11 +1,12 @@
 /**
  * The self-check of a solution, from quantities the solver did not use to find it:
- * balance of vertical forces and of moments of the whole beam, and external work against strain energy (Clapeyron's theorem).
+ * balance of vertical forces and of moments of the whole beam, external work against strain energy (Clapeyron's theorem), and, for each
+ * region, its balance and compatibility: the diagrams' values at its right end against the state the closing equations joined there.
  * Each residual is relative to the sum of the absolute values of its own terms, so it has no units.
  */
 import type { Residuals } from '../solution';
 import { integrateRegion } from './fields';
-import { addScaled, derivative, multiply, productIntegral } from './polynomial';
+import { addScaled, derivative, evaluate, multiply, productIntegral } from './polynomial';
 import { loadPolynomial, noLoad } from './region-load';
 import { BeamResponse, type System } from './response';
 
@@ -35,18 +36,57 @@ class Balance {
 export function selfCheck(system: System): Residuals {
   let equilibrium = 0;
   let energy = 0;
+  let conditions = system.closed.conditions;
   for (let c = 0; c < system.columns.count; c++) {
     const weights = new Float64Array(system.columns.count);
     weights[c] = 1;
-    const [balance, work] = checkColumn(system, c, weights);
-    equilibrium = Math.max(equilibrium, balance);
-    energy = Math.max(energy, work);
+    const found = checkColumn(system, c, weights);
+    equilibrium = Math.max(equilibrium, found.equilibrium);
+    energy = Math.max(energy, found.energy);
+    conditions = Math.max(conditions, found.conditions);
   }
-  return { equilibrium, energy, conditions: system.closed.conditions };
+  return { equilibrium, energy, conditions };
 }
 
 /** Part of EI v / l^2 below which moments count as rounding: 2^-20 leaves a factor of 500 between eps and REFUSE. */
 const UNSTRESSED = 2 ** -20;
+
+/** Largest mismatch of the four components where regions join, each relative to its own size over the whole beam. */
+class Joints {
+  private readonly gap = [0, 0, 0, 0];
+  private readonly size = [0, 0, 0, 0];
+  private motion = 0;
+
+  compare(a: readonly number[], b: Float64Array): void {
+    for (let i = 0; i < 4; i++) {
+      this.gap[i] = Math.max(this.gap[i]!, Math.abs(a[i]! - b[i]!));
+      this.size[i] = Math.max(this.size[i]!, Math.abs(b[i]!));
+    }
+  }
+
+  /** Sizes tied together through the length and flexibility of a segment: a zero component is only zero to rounding of the others. */
+  scale(y: Float64Array, ahead: { length: number; flexibility: number }): void {
+    const { length: l, flexibility: f } = ahead;
+    this.motion = Math.max(
+      this.motion,
+      Math.abs(y[0]!),
+      l * Math.abs(y[1]!),
+      f * l * l * Math.abs(y[2]!),
+      f * l * l * l * Math.abs(y[3]!),
+    );
+    const stiffness = (UNSTRESSED * this.motion) / (f * l * l);
+    this.size[0] = Math.max(this.size[0]!, this.motion);
+    this.size[1] = Math.max(this.size[1]!, this.motion / l);
+    this.size[2] = Math.max(this.size[2]!, stiffness);
+    this.size[3] = Math.max(this.size[3]!, stiffness / l);
+  }
+
+  get residual(): number {
+    let worst = 0;
+    for (let i = 0; i < 4; i++) if (this.gap[i]! > 0) worst = Math.max(worst, this.gap[i]! / this.size[i]!);
+    return worst;
+  }
+}
 
 /** For each break that is a station: length and mean flexibility of the segment to its right. */
 function segmentsByStart(system: System): ({ length: number; flexibility: number } | undefined)[] {
@@ -66,7 +106,7 @@ function segmentsByStart(system: System): ({ length: number; flexibility: number
   return out;
 }
 
-function checkColumn(system: System, column: number, weights: Float64Array): [number, number] {
+function checkColumn(system: System, column: number, weights: Float64Array): Residuals {
   const { cut, columns, axial, closed } = system;
   const { regions, breaks } = cut;
   const response = new BeamResponse(system, weights);
@@ -80,6 +120,8 @@ function checkColumn(system: System, column: number, weights: Float64Array): [nu
   let nextReaction = 0;
 
   const reach = segmentsByStart(system);
+  const joints = new Joints();
+  const end = [0, 0, 0, 0];
   let vStart = 0;
   let vEnd = 0;
   for (let b = 0; b <= regions.length; b++) {
@@ -92,8 +134,10 @@ function checkColumn(system: System, column: number, weights: Float64Array): [nu
     force.weigh(state[3]!);
     moment.weigh(state[2]!);
     moment.weigh(axial * state[0]!);
+    if (left && b > 0) joints.compare(end, left);
     const ahead = reach[b];
     if (ahead) {
+      joints.scale(state, ahead);
       // a beam that is only displaced holds moments of rounding size: eps times EI v / l^2. They are no error.
       const v = Math.max(Math.abs(state[0]!), Math.abs(state[1]!) * ahead.length);
       const stiffness = (UNSTRESSED * v) / (ahead.flexibility * ahead.length ** 2);
@@ -106,7 +150,7 @@ function checkColumn(system: System, column: number, weights: Float64Array): [nu
     const offset = j >= 0 ? columns.jumps![j]! : 0;
     const kink = j >= 0 ? columns.jumps![j + 1]! : 0;
     let down = j >= 0 ? -columns.jumps![j + 3]! : 0;
-    let couple = j >= 0 ? columns.jumps![j + 2]! - axial * offset : 0;
+    let couple = j >= 0 ? columns.jumps![j + 2]! : 0;
     if (supports.has(b)) {
       const reaction = reactions[nextReaction++]!;
       down -= reaction.force;
@@ -120,8 +164,8 @@ function checkColumn(system: System, column: number, weights: Float64Array): [nu
     const mean = (i: number): number =>
       left && right ? 0.5 * (left[i]! + right[i]!) : left ? left[i]! : right![i]!;
     const opened = left && right ? right[0]! - left[0]! : 0;
-    // a sliding joint under axial force turns the couple N x offset
-    if (opened !== offset && axial !== 0 && left && right) couple -= axial * (opened - offset);
+    // halves that stand apart under axial force turn the couple N x opening: it works, but it is no load on the whole
+    if (opened !== 0 && axial !== 0) couple -= axial * opened;
     work.add(down * mean(0));
     work.add(couple * mean(1));
     work.add(-offset * mean(3));
@@ -133,6 +177,10 @@ function checkColumn(system: System, column: number, weights: Float64Array): [nu
     columns.read(b, column, load);
     const fields = integrateRegion(region, axial, load, right!);
     const o = region.origin;
+    end[0] = evaluate(fields.v, o + 1);
+    end[1] = evaluate(fields.t, o + 1);
+    end[2] = evaluate(fields.M, o + 1);
+    end[3] = evaluate(fields.S, o + 1);
     const h = region.h;
     const q = loadPolynomial(region, load);
     const soil = region.k !== 0 ? fields.v.map((a) => -region.k * a) : null;
@@ -173,5 +221,9 @@ function checkColumn(system: System, column: number, weights: Float64Array): [nu
     moment.add(-axial * (vEnd - vStart));
     moment.add(-axial * rise);
   }
-  return [Math.max(force.residual, moment.residual), work.residual];
+  return {
+    equilibrium: Math.max(force.residual, moment.residual),
+    energy: work.residual,
+    conditions: joints.residual,
+  };
 }
