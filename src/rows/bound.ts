@@ -5,8 +5,8 @@ import { carry, NUMBER, PLAIN, type Carried } from './carried';
 import { nearest } from './near';
 import { readNumberText } from './number-text';
 import type { Plan } from './plan';
-import { times, toNumber } from './rational';
-import { readText, unitMissing, type Scalar } from './scalar';
+import { readText } from './cell-text';
+import { unitMissing, type Scalar } from './scalar';
 import { sameDimension, unitText, usualUnit, type UnitSystem } from './system';
 
 export interface Bound {
@@ -20,9 +20,6 @@ interface Converted {
   readonly value: number;
   readonly carried: Carried;
 }
-
-/** Values with units, per unit system: schedules repeat them. */
-const converted = new WeakMap<UnitSystem, Map<string, Converted>>();
 
 /** null: issues were added. */
 export function bind(plan: Plan, bindings: Bindings, issues: Issue[]): Bound {
@@ -71,8 +68,6 @@ function readValue(name: string, text: string, system: UnitSystem | null, issues
     issues.push({ ...place, code: 'ambiguous-number', found: text, detail: { name } });
     return null;
   }
-  const known = system === null ? undefined : converted.get(system)?.get(text);
-  if (known !== undefined) return known;
   const read = readText(text);
   if (read.kind !== 'quantity') {
     const refused =
@@ -93,15 +88,10 @@ function readValue(name: string, text: string, system: UnitSystem | null, issues
   const { unit } = read;
   const { force, length, angle } = unit;
   const pure = force === 0 && length === 0 && angle === 0;
-  const value: Converted = {
-    value: toNumber(times(read.exact, system.exactFactor(unit))) * Math.PI ** unit.pi,
-    carried: pure ? NUMBER : { kind: 'known', dimension: { force, length, angle } },
+  return {
+    value: system.value(text, read.exact, unit),
+    carried: pure ? NUMBER : { kind: 'known', dimension: unit },
   };
-  let store = converted.get(system);
-  if (store === undefined) converted.set(system, (store = new Map()));
-  if (store.size > 2000) store.clear();
-  store.set(text, value);
-  return value;
 }
 
 /** The scalar in the model's units; NaN when an issue was added. */
@@ -119,7 +109,7 @@ export function evaluate(scalar: Scalar, bound: Bound, plan: Plan, issues: Issue
       code: 'not-finite',
       kind: 'invalid',
       row: scalar.row,
-      column: scalar.column,
+      column: scalar.field.column,
       found: scalar.expression!.text,
     });
   }
@@ -129,10 +119,11 @@ export function evaluate(scalar: Scalar, bound: Bound, plan: Plan, issues: Issue
 /** What takes the expression's value into the model's units; NaN when an issue was added. */
 export function factorOf(scalar: Scalar, bound: Bound, plan: Plan, issues: Issue[]): number {
   const { system } = plan;
-  const { row, column } = scalar;
+  const { row } = scalar;
+  const { column, dimension } = scalar.field;
   if (bound.carried === null || system === null) {
     if (!scalar.needsUnit) return scalar.factor;
-    unitMissing(scalar, issues, system!, scalar.expression!.text);
+    unitMissing(row, scalar.field, issues, system!, scalar.expression!.text);
     return NaN;
   }
   const { carried } = bound;
@@ -143,11 +134,11 @@ export function factorOf(scalar: Scalar, bound: Bound, plan: Plan, issues: Issue
   }
   if (result.kind === 'number' || result.kind === 'plain') {
     if (!scalar.needsUnit) return scalar.factor;
-    unitMissing(scalar, issues, system, scalar.expression!.text);
+    unitMissing(row, scalar.field, issues, system, scalar.expression!.text);
     return NaN;
   }
   if (result.kind === 'known') {
-    if (sameDimension(result.dimension, scalar.dimension)) return 1;
+    if (sameDimension(result.dimension, dimension)) return 1;
     const unit = unitText(result.dimension, system);
     issues.push({
       code: 'wrong-dimension',
@@ -155,7 +146,7 @@ export function factorOf(scalar: Scalar, bound: Bound, plan: Plan, issues: Issue
       row,
       column,
       found: unit,
-      expected: usualUnit(scalar.dimension, system) || 'a number without a unit',
+      expected: usualUnit(dimension, system) || 'a number without a unit',
     });
     return NaN;
   }

@@ -7,7 +7,7 @@ import { combineAtRow, CASE_NAME } from './combine';
 import { buildPlan, type BuildResult } from './build';
 import type { Bindings } from './bindings';
 import { isBlank, isErrorCell, showCell, type Cell } from './cell';
-import { LENGTH, SPECS, takes, type ItemSpec } from './items';
+import { AT, fieldsOf, LENGTH, SPECS, takes, TO, type Field, type ItemSpec } from './items';
 import { layOut, type Layout, type RowInfo } from './layout';
 import { readLimitCell } from './limit';
 import type { Placed, Plan, PlannedLimit } from './plan';
@@ -143,18 +143,13 @@ class Compiler implements Reading {
     let value: Scalar | null = null;
     let end: Scalar | null = null;
     if (spec.value !== null) {
-      const unit = readUnitCell(cells.Unit, { row, dimension: spec.value }, this);
-      // A wrong unit has been said; the number is still read, as if in the table's own unit, for what else is wrong with it.
-      const ask = {
-        row,
-        dimension: spec.value,
-        bare: unit === undefined ? 'model' : spec.bare,
-        unit: unit ?? null,
-      } as const;
-      value = readScalar(cells.Value, { ...ask, column: 'Value', law: spec.law }, this);
-      if (spec.end)
-        end = this.endValue(cells['End value'], value, { ...ask, column: 'End value', law: false });
-      if (value !== null) this.checkValue(value, item, spec);
+      const unit = readUnitCell(cells.Unit, row, spec.value, this);
+      const fields = fieldsOf(item);
+      if (unit !== undefined) {
+        value = readScalar(cells.Value, row, fields.value, unit, this);
+        if (spec.end) end = this.endValue(cells['End value'], value, row, fields.end, unit);
+        if (value !== null) this.checkValue(value, item, spec);
+      }
     }
     const caseIndex = spec.load ? this.caseOf(cells.Case, row) : -1;
     if (this.issues.length > before) return null;
@@ -174,21 +169,23 @@ class Compiler implements Reading {
   private endValue(
     cell: Cell | undefined,
     value: Scalar | null,
-    ask: Parameters<typeof readScalar>[1],
+    row: number,
+    field: Field,
+    unit: Unit | null,
   ): Scalar | null {
     if (value?.usesX) {
       if (!isBlank(cell)) {
         this.issues.push({
           code: 'end-with-law',
           kind: 'invalid',
-          row: ask.row,
+          row,
           column: 'End value',
           found: showCell(cell),
         });
       }
       return null;
     }
-    return readScalar(cell, ask, this);
+    return readScalar(cell, row, field, unit, this);
   }
 
   private checkValue(value: Scalar, item: ItemName, spec: ItemSpec): void {
@@ -199,7 +196,7 @@ class Compiler implements Reading {
         this.issues.push({
           ...place,
           code: 'not-positive',
-          found: value.blank ? '0 or a blank cell' : value.written,
+          found: value.blank ? '0 or a blank cell' : String(value.written),
           detail: { item },
         });
       }
@@ -212,10 +209,9 @@ class Compiler implements Reading {
   private position(info: RowInfo, item: ItemName, spec: ItemSpec): [number, number] {
     const { row, cells } = info;
     if (spec.at === 'none') return [-1, -1];
-    const ask = { row, dimension: LENGTH, bare: 'model', law: false, unit: null } as const;
-    const at = readScalar(cells.At, { ...ask, column: 'At' }, this);
+    const at = readScalar(cells.At, row, AT, null, this);
     if (spec.at === 'place') return at === null ? [-1, -1] : [this.places.push(at) - 1, -1];
-    const to = readScalar(cells.To, { ...ask, column: 'To' }, this);
+    const to = readScalar(cells.To, row, TO, null, this);
     if (at === null || to === null) return [-1, -1];
     const atZero = at.expression === null && at.constant === 0;
     const toZero = to.expression === null && to.constant === 0;
@@ -227,7 +223,7 @@ class Compiler implements Reading {
         kind: 'invalid',
         row,
         column: 'To',
-        found: at.written,
+        found: String(at.written),
         detail: { item },
       });
     }
@@ -266,7 +262,7 @@ class Compiler implements Reading {
   }
 
   private limit({ row, cells }: RowInfo): PlannedLimit | null {
-    const unit = readUnitCell(cells.Unit, { row, dimension: LENGTH }, this);
+    const unit = readUnitCell(cells.Unit, row, LENGTH, this);
     const read = readLimitCell(cells.Value, row, unit ?? null, this);
     const combined = combineAtRow(cells.Case, this.cases, row);
     if (!combined.ok) {

@@ -5,6 +5,15 @@ import type { Dimension } from './units';
 /** What a bare number is in: the units row's force and length, its deflection unit, radians, or nothing (the unit must be stated). */
 export type Bare = 'model' | 'deflection' | 'radians' | 'stated';
 
+/** What a number cell is asked for. */
+export interface Field {
+  readonly column: ColumnName;
+  readonly dimension: Dimension;
+  readonly bare: Bare;
+  /** may be an expression in x */
+  readonly law: boolean;
+}
+
 export interface ItemSpec {
   readonly group: 'support' | 'imposed' | 'release' | 'foundation' | 'section' | 'load' | 'setting';
   /** place: one position; stretch: At..To, blank or 0..0 = the whole beam */
@@ -147,6 +156,24 @@ export const SPECS: Readonly<Record<ItemName, ItemSpec>> = {
     quantity: 'deflection',
   },
 };
+
+export const AT: Field = { column: 'At', dimension: LENGTH, bare: 'model', law: false };
+export const TO: Field = { column: 'To', dimension: LENGTH, bare: 'model', law: false };
+
+/** The fields of Value and End value of each item; fixed objects, because they are asked for with every row of every table. */
+const FIELDS = new Map<ItemName, { readonly value: Field; readonly end: Field }>();
+for (const [item, spec] of Object.entries(SPECS) as [ItemName, ItemSpec][]) {
+  const { value, bare, law } = spec;
+  if (value === null) continue;
+  FIELDS.set(item, {
+    value: { column: 'Value', dimension: value, bare, law },
+    end: { column: 'End value', dimension: value, bare, law: false },
+  });
+}
+
+export function fieldsOf(item: ItemName): { readonly value: Field; readonly end: Field } {
+  return FIELDS.get(item)!;
+}
 
 /** Is this column of any use to the item? Settings read their cells themselves. */
 export function takes(item: ItemName, column: ColumnName): boolean {

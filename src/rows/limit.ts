@@ -2,16 +2,22 @@
 import type { BeamModel, Limit } from '../beam/model';
 import type { Issue } from '../issue';
 import { isBlank, isErrorCell, normaliseCell, showCell, type Cell } from './cell';
-import { LENGTH } from './items';
+import { readText } from './cell-text';
+import { fieldsOf, type Field } from './items';
 import { times, toNumber, type Ratio } from './rational';
-import { readScalar, readText, type Reading, type Scalar } from './scalar';
+import { readScalar, type Reading, type Scalar } from './scalar';
 import { unitSystem } from './system';
-import { parseUnit, type Dimension, type Unit } from './units';
+import { parseUnit, type Unit } from './units';
 
 const SPAN = /^span\s*\/\s*(\S.*)$/i;
 /** L/360 is the usual way to say span/360 on paper, but L may be a name of the table. */
 const LETTER = /^l\s*\/\s*([\d.]+)$/i;
-const PURE: Dimension = { force: 0, length: 0, angle: 0 };
+const DIVISOR: Field = {
+  column: 'Value',
+  dimension: { force: 0, length: 0, angle: 0 },
+  bare: 'radians',
+  law: false,
+};
 
 /** The Value of a `limit` row. null: an issue was added. */
 export function readLimitCell(
@@ -40,21 +46,18 @@ export function readLimitCell(
         });
         return null;
       }
-      const scalar = readScalar(
-        span[1]!,
-        { row, column, dimension: PURE, bare: 'radians', law: false, unit: null },
-        { ...table, text: true },
-      );
+      // The number after "span/" is text by nature, so it earns no caution about numbers stored as text.
+      const read = readText(span[1]!);
+      const scalar = readScalar(read.kind === 'number' ? read.value : span[1]!, row, DIVISOR, null, table);
       return scalar === null ? null : { scalar, kind: 'fraction', text: `span/${span[1]!}` };
     }
   }
-  const scalar = readScalar(
-    cell,
-    { row, column, dimension: LENGTH, bare: 'deflection', law: false, unit },
-    table,
-  );
+  const scalar = readScalar(cell, row, fieldsOf('limit').value, unit, table);
   if (scalar === null) return null;
-  const shown = scalar.unit?.text ?? table.system?.deflection.text ?? '';
+  const shown =
+    typeof scalar.written === 'string' && scalar.unit !== null && scalar.expression === null
+      ? ''
+      : (scalar.unit?.text ?? table.system?.deflection.text ?? '');
   return { scalar, kind: 'absolute', text: `${scalar.written} ${shown}`.trim() };
 }
 

@@ -4,7 +4,7 @@ import type { Issue } from '../issue';
 import type { Side } from '../solution';
 import { isErrorCell, normaliseCell, showCell } from './cell';
 import { lengthIn } from './limit';
-import { readText } from './scalar';
+import { readText } from './cell-text';
 import { showNumber } from './show';
 
 export type PositionResult =

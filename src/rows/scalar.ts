@@ -1,96 +1,43 @@
 /**
  * A number cell, read once: a constant already in the model's units, or an expression with the factor that takes its value
- * there. Text is understood in this order: a number, a length in feet and inches, a number with a unit, an expression.
+ * there.
  */
 import type { Issue } from '../issue';
 import { isErrorCell, showCell, type Cell } from './cell';
-import { parseExpression, type Closure, type Expression } from './expression';
-import { readFeet } from './feet';
-import type { Bare } from './items';
-import { remember } from './memo';
-import { readNumberText, splitQuantity } from './number-text';
-import { decimal, times, toNumber, type Ratio } from './rational';
-import { sameDimension, unitText, usualUnit, type UnitSystem } from './system';
+import { readText } from './cell-text';
+import type { Closure, Expression } from './expression';
+import type { Field } from './items';
+import { toNumber, type Ratio } from './rational';
+import { sameDimension, usualUnit, type UnitSystem } from './system';
 import { parseUnit, type Dimension, type Unit } from './units';
-import type { ColumnName } from './words';
 
-/** What the text of a cell says, before any table is known. */
-export type Text =
-  | { readonly kind: 'number'; readonly value: number; readonly odd: boolean }
-  | { readonly kind: 'quantity'; readonly exact: Ratio; readonly unit: Unit; readonly odd: boolean }
-  | { readonly kind: 'expression'; readonly expression: Expression }
-  | {
-      readonly kind: 'refused';
-      readonly reason: string;
-      readonly found: string;
-      readonly suggestion?: string;
-    };
+/** Made for every number cell of every table that comes by, so it is a plain class of one shape. */
+export class Scalar {
+  constructor(
+    /** 1-based */
+    readonly row: number,
+    readonly field: Field,
+    /** in the model's units, when there is no expression */
+    readonly constant: number,
+    readonly expression: Expression | null,
+    readonly evaluate: Closure | null,
+    /** model units per unit of the expression's value, unless its names carry units */
+    readonly factor: number,
+    /** the row needs a stated unit, and only names could carry it */
+    readonly needsUnit: boolean,
+    /** a unit stands in the Unit column, so names must not carry another */
+    readonly unitColumn: boolean,
+    /** blank or 0 */
+    readonly blank: boolean,
+    /** the unit it was written in; null = the bare unit */
+    readonly unit: Unit | null,
+    /** the number or expression as written, without its unit */
+    readonly written: number | string,
+  ) {}
 
-const INCHES = parseUnit('in');
-
-/** Reads the text of a number cell; remembered per text. */
-export const readText: (text: string) => Text = remember((text: string): Text => {
-  const number = readNumberText(text);
-  if (number !== null) {
-    if (number.kind === 'ambiguous') return { kind: 'refused', reason: 'ambiguous-number', found: text };
-    return { kind: 'number', value: Number(number.decimal), odd: number.odd };
+  get usesX(): boolean {
+    return this.expression !== null && this.expression.usesX;
   }
-  const feet = readFeet(text);
-  if (feet !== null && INCHES.ok) return { kind: 'quantity', exact: feet, unit: INCHES.unit, odd: false };
-  const split = splitQuantity(text);
-  if (split !== null) {
-    const part = readNumberText(split.number);
-    if (part?.kind === 'ambiguous') return { kind: 'refused', reason: 'ambiguous-number', found: text };
-    if (part?.kind === 'number') {
-      const unit = parseUnit(split.unit);
-      if (unit.ok) return { kind: 'quantity', exact: decimal(part.decimal), unit: unit.unit, odd: part.odd };
-      const reason = unit.reason === 'unknown' ? 'unknown-unit' : 'foreign-unit';
-      const { suggestion } = unit;
-      return {
-        kind: 'refused',
-        reason,
-        found: unit.reason === 'unknown' ? unit.part : split.unit,
-        ...(suggestion === undefined ? {} : { suggestion }),
-      };
-    }
-  }
-  const result = parseExpression(text);
-  if (result.ok) return { kind: 'expression', expression: result.expression };
-  const { reason, found, suggestion } = result;
-  return { kind: 'refused', reason, found, ...(suggestion === undefined ? {} : { suggestion }) };
-});
-
-export interface Scalar {
-  readonly row: number;
-  readonly column: ColumnName;
-  /** in the model's units, when there is no expression */
-  readonly constant: number;
-  readonly expression: Expression | null;
-  readonly evaluate: Closure | null;
-  /** model units per unit of the expression's value, unless its names carry units */
-  readonly factor: number;
-  /** the row needs a stated unit, and only names could carry it */
-  readonly needsUnit: boolean;
-  /** a unit stands in the Unit column, so names must not carry another */
-  readonly unitColumn: boolean;
-  readonly dimension: Dimension;
-  /** blank or 0 */
-  readonly blank: boolean;
-  readonly usesX: boolean;
-  /** the unit it was written in; null = the bare unit */
-  readonly unit: Unit | null;
-  /** the number in that unit, for READBACK */
-  readonly written: string;
-}
-
-export interface ScalarRequest {
-  readonly row: number;
-  readonly column: ColumnName;
-  readonly dimension: Dimension;
-  readonly bare: Bare;
-  readonly law: boolean;
-  /** the row's Unit column, read */
-  readonly unit: Unit | null;
 }
 
 /** What reading the rows of one table shares. */
@@ -106,219 +53,213 @@ export interface Reading {
   readonly text: boolean;
 }
 
-/** null: an issue was added. */
-export function readScalar(cell: Cell | undefined, ask: ScalarRequest, table: Reading): Scalar | null {
-  const { row, column } = ask;
-  if (cell === null || cell === undefined) return constant(0, '0', ask, table, true, ask.unit);
-  if (typeof cell === 'number') return constant(cell, String(cell), ask, table, cell === 0, ask.unit);
+/** `unit` is the row's Unit column, read. null: an issue was added. */
+export function readScalar(
+  cell: Cell | undefined,
+  row: number,
+  field: Field,
+  unit: Unit | null,
+  table: Reading,
+): Scalar | null {
+  if (cell === null || cell === undefined) return constant(0, 0, row, field, unit, true, table);
+  if (typeof cell === 'number') return constant(cell, cell, row, field, unit, cell === 0, table);
   if (typeof cell === 'boolean') {
-    table.issues.push({ code: 'cell-boolean', kind: 'invalid', row, column, found: showCell(cell) });
-    return null;
+    return fault(table, {
+      code: 'cell-boolean',
+      kind: 'invalid',
+      row,
+      column: field.column,
+      found: showCell(cell),
+    });
   }
   if (isErrorCell(cell)) {
-    table.issues.push({ code: 'cell-error', kind: 'invalid', row, column, found: cell.error });
-    return null;
+    return fault(table, {
+      code: 'cell-error',
+      kind: 'invalid',
+      row,
+      column: field.column,
+      found: cell.error,
+    });
   }
   const text = readText(cell);
   switch (text.kind) {
     case 'number':
-      if (text.odd || !table.text) {
-        table.cautions.push({
-          code: 'number-as-text',
-          kind: 'invalid',
-          row,
-          column,
-          found: cell,
-          expected: String(text.value),
-        });
-      }
-      return constant(text.value, String(text.value), ask, table, false, ask.unit);
+      if (text.odd || !table.text) asText(cell, String(text.value), row, field, table);
+      return constant(text.value, text.value, row, field, unit, false, table);
     case 'quantity':
-      if (text.odd) {
-        table.cautions.push({
-          code: 'number-as-text',
-          kind: 'invalid',
-          row,
-          column,
-          found: cell,
-          expected: `${toNumber(text.exact)} ${text.unit.text}`,
-        });
-      }
-      return quantity(text.exact, text.unit, cell, ask, table);
-    case 'refused': {
+      if (text.odd) asText(cell, `${toNumber(text.exact)} ${text.unit.text}`, row, field, table);
+      return quantity(text.exact, text.unit, cell, row, field, unit, table);
+    case 'expression':
+      return formula(text.expression, row, field, unit, table);
+    default: {
       const { reason, found, suggestion } = text;
-      table.issues.push({
+      const expected = table.system === null ? '' : usualUnit(field.dimension, table.system);
+      return fault(table, {
         code: reason,
         kind: 'invalid',
         row,
-        column,
+        column: field.column,
         found,
-        ...(suggestion === undefined ? {} : { suggestion }),
-        detail: { text: cell, expected: expectedUnit(ask, table.system) },
+        suggestion,
+        detail: { text: cell, expected },
       });
-      return null;
     }
-    default:
-      return formula(text.expression, ask, table);
   }
+}
+
+function fault(table: Reading, issue: Issue): null {
+  table.issues.push(issue);
+  return null;
+}
+
+function asText(cell: string, expected: string, row: number, field: Field, table: Reading): void {
+  table.cautions.push({
+    code: 'number-as-text',
+    kind: 'invalid',
+    row,
+    column: field.column,
+    found: cell,
+    expected,
+  });
 }
 
 function constant(
   value: number,
-  written: string,
-  ask: ScalarRequest,
-  table: Reading,
-  blank: boolean,
+  written: number | string,
+  row: number,
+  field: Field,
   unit: Unit | null,
+  blank: boolean,
+  table: Reading,
 ): Scalar | null {
-  const factor = bareFactor(ask, table);
-  if (value !== 0 && needsUnit(ask, table)) {
-    unitMissing(ask, table.issues, table.system!, written);
-    return null;
-  }
+  if (value !== 0 && needsUnit(field, unit, table))
+    return unitMissing(row, field, table.issues, table.system!, String(written));
+  const factor = bareFactor(field, unit, table);
   const product = value * factor;
   if (!Number.isFinite(product)) {
-    table.issues.push({
+    return fault(table, {
       code: 'not-finite',
       kind: 'invalid',
-      row: ask.row,
-      column: ask.column,
-      found: written,
+      row,
+      column: field.column,
+      found: String(written),
     });
-    return null;
   }
-  return { ...base(ask), constant: product, blank, unit, written, factor };
+  return new Scalar(row, field, product, null, null, factor, false, unit !== null, blank, unit, written);
 }
 
-function base(ask: ScalarRequest) {
-  return {
-    row: ask.row,
-    column: ask.column,
-    expression: null,
-    evaluate: null,
-    needsUnit: false,
-    unitColumn: ask.unit !== null,
-    dimension: ask.dimension,
-    usesX: false,
-  };
+function bareFactor(field: Field, unit: Unit | null, { system }: Reading): number {
+  if (system === null) return 1;
+  if (unit !== null) return system.factor(unit);
+  return field.bare === 'deflection' ? system.deflectionFactor : 1;
 }
 
-function bareFactor(ask: ScalarRequest, table: Reading): number {
-  if (table.system === null) return 1;
-  if (ask.unit !== null) return table.system.factor(ask.unit);
-  return ask.bare === 'deflection' ? table.system.deflectionFactor : 1;
-}
-
-function needsUnit(ask: ScalarRequest, table: Reading): boolean {
-  return table.system !== null && ask.bare === 'stated' && ask.unit === null;
+function needsUnit(field: Field, unit: Unit | null, table: Reading): boolean {
+  return unit === null && field.bare === 'stated' && table.system !== null;
 }
 
 export function unitMissing(
-  ask: { readonly row: number; readonly column: string; readonly dimension: Dimension },
+  row: number,
+  field: Field,
   issues: Issue[],
   system: UnitSystem,
   written: string,
-): void {
+): null {
   issues.push({
     code: 'unit-missing',
     kind: 'invalid',
-    row: ask.row,
-    column: ask.column,
+    row,
+    column: field.column,
     found: written,
-    suggestion: usualUnit(ask.dimension, system),
+    suggestion: usualUnit(field.dimension, system),
   });
+  return null;
 }
 
-function quantity(exact: Ratio, unit: Unit, cell: string, ask: ScalarRequest, table: Reading): Scalar | null {
-  const { row, column } = ask;
+function quantity(
+  exact: Ratio,
+  stated: Unit,
+  cell: string,
+  row: number,
+  field: Field,
+  unit: Unit | null,
+  table: Reading,
+): Scalar | null {
   const { system } = table;
+  const { column } = field;
   if (system === null) {
     table.unitWithoutRow(row, column, cell);
     return null;
   }
-  if (ask.unit !== null && ask.unit.text !== unit.text) {
-    table.issues.push({
+  if (unit !== null && unit.text !== stated.text) {
+    return fault(table, {
       code: 'unit-twice',
       kind: 'invalid',
       row,
       column,
       found: cell,
-      expected: ask.unit.text,
+      expected: unit.text,
     });
-    return null;
   }
-  if (!sameDimension(unit, ask.dimension)) {
-    wrongDimension(unit, ask, table.issues, system);
-    return null;
-  }
-  const value = toNumber(times(exact, system.exactFactor(unit))) * Math.PI ** unit.pi;
-  if (!Number.isFinite(value)) {
-    table.issues.push({ code: 'not-finite', kind: 'invalid', row, column, found: cell });
-    return null;
-  }
-  return { ...base(ask), constant: value, blank: false, unit, written: String(toNumber(exact)), factor: 1 };
+  if (!sameDimension(stated, field.dimension))
+    return wrongDimension(stated, row, column, field.dimension, table.issues, system);
+  const value = system.value(cell, exact, stated);
+  if (!Number.isFinite(value))
+    return fault(table, { code: 'not-finite', kind: 'invalid', row, column, found: cell });
+  return new Scalar(row, field, value, null, null, 1, false, true, false, stated, cell);
 }
 
-export function wrongDimension(
+function wrongDimension(
   unit: Unit,
-  ask: { readonly row: number; readonly column: string; readonly dimension: Dimension },
+  row: number,
+  column: string,
+  dimension: Dimension,
   issues: Issue[],
   system: UnitSystem,
-): void {
+): null {
   issues.push({
     code: 'wrong-dimension',
     kind: 'invalid',
-    row: ask.row,
-    column: ask.column,
+    row,
+    column,
     found: unit.text,
-    expected: usualUnit(ask.dimension, system),
+    expected: usualUnit(dimension, system),
   });
+  return null;
 }
 
-function expectedUnit(ask: ScalarRequest, system: UnitSystem | null): string {
-  return system === null ? '' : usualUnit(ask.dimension, system);
-}
-
-function formula(expression: Expression, ask: ScalarRequest, table: Reading): Scalar | null {
-  const { row, column } = ask;
-  if (expression.usesX && !ask.law) {
-    table.issues.push({ code: 'x-not-allowed', kind: 'invalid', row, column, found: expression.text });
-    return null;
-  }
+function formula(
+  expression: Expression,
+  row: number,
+  field: Field,
+  unit: Unit | null,
+  table: Reading,
+): Scalar | null {
+  const { column } = field;
+  const { names, usesX, text } = expression;
+  if (usesX && !field.law)
+    return fault(table, { code: 'x-not-allowed', kind: 'invalid', row, column, found: text });
   const evaluate = expression.root.compile((name) => table.slot(name, row, column));
-  if (expression.names.length === 0 && !expression.usesX) {
+  if (names.length === 0 && !usesX) {
     const value = evaluate([]);
-    if (!Number.isFinite(value)) {
-      table.issues.push({ code: 'not-finite', kind: 'invalid', row, column, found: expression.text });
-      return null;
-    }
-    return constant(value, String(value), ask, table, false, ask.unit);
+    if (!Number.isFinite(value))
+      return fault(table, { code: 'not-finite', kind: 'invalid', row, column, found: text });
+    return constant(value, text, row, field, unit, false, table);
   }
-  if (expression.names.length === 0 && needsUnit(ask, table)) {
-    unitMissing(ask, table.issues, table.system!, expression.text);
-    return null;
-  }
-  return {
-    ...base(ask),
-    constant: 0,
-    expression,
-    evaluate,
-    factor: bareFactor(ask, table),
-    needsUnit: needsUnit(ask, table),
-    usesX: expression.usesX,
-    blank: false,
-    unit: ask.unit,
-    written: expression.text,
-  };
+  const stated = !needsUnit(field, unit, table);
+  // Without names there is nothing that could carry the unit later.
+  if (!stated && names.length === 0) return unitMissing(row, field, table.issues, table.system!, text);
+  const factor = bareFactor(field, unit, table);
+  return new Scalar(row, field, 0, expression, evaluate, factor, !stated, unit !== null, false, unit, text);
 }
 
 /** The row's Unit column; undefined: an issue was added. */
 export function readUnitCell(
   cell: Cell | undefined,
-  ask: { readonly row: number; readonly dimension: Dimension },
+  row: number,
+  dimension: Dimension,
   table: Reading,
 ): Unit | null | undefined {
-  const { row } = ask;
   const place = { kind: 'invalid', row, column: 'Unit' } as const;
   if (cell === null || cell === undefined || cell === 0) return null;
   if (typeof cell !== 'string') {
@@ -334,7 +275,7 @@ export function readUnitCell(
       code: unit.reason === 'unknown' ? 'unknown-unit' : 'foreign-unit',
       found: unit.reason === 'unknown' ? unit.part : cell,
       ...(suggestion === undefined ? {} : { suggestion }),
-      detail: { text: cell, expected: table.system === null ? '' : usualUnit(ask.dimension, table.system) },
+      detail: { text: cell, expected: table.system === null ? '' : usualUnit(dimension, table.system) },
     });
     return undefined;
   }
@@ -342,11 +283,9 @@ export function readUnitCell(
     table.unitWithoutRow(row, 'Unit', cell);
     return undefined;
   }
-  if (!sameDimension(unit.unit, ask.dimension)) {
-    wrongDimension(unit.unit, { row, column: 'Unit', dimension: ask.dimension }, table.issues, table.system);
+  if (!sameDimension(unit.unit, dimension)) {
+    wrongDimension(unit.unit, row, 'Unit', dimension, table.issues, table.system);
     return undefined;
   }
   return unit.unit;
 }
-
-export { unitText };

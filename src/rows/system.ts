@@ -13,6 +13,8 @@ export interface UnitSystem {
   factor(unit: Unit): number;
   /** the same factor as a fraction, to be multiplied by an exact number before rounding (pi left out) */
   exactFactor(unit: Unit): Ratio;
+  /** an exact number of `unit` in the model's units, rounded once; remembered by its text ("8360 cm4") */
+  value(text: string, exact: Ratio, unit: Unit): number;
 }
 
 const known = new Map<string, UnitSystem>();
@@ -34,6 +36,16 @@ export function unitSystem(force: Unit, length: Unit, deflection: Unit): UnitSys
     }
     return value;
   };
+  const values = new Map<string, number>();
+  const value = (text: string, exact: Ratio, unit: Unit): number => {
+    let found = values.get(text);
+    if (found === undefined) {
+      found = toNumber(times(exact, exactFactor(unit))) * Math.PI ** unit.pi;
+      if (values.size > 2000) values.clear();
+      values.set(text, found);
+    }
+    return found;
+  };
   const system: UnitSystem = {
     force,
     length,
@@ -41,6 +53,7 @@ export function unitSystem(force: Unit, length: Unit, deflection: Unit): UnitSys
     deflectionFactor: factor(deflection),
     factor,
     exactFactor,
+    value,
   };
   if (known.size > 200) known.clear();
   known.set(key, system);
