@@ -39,6 +39,7 @@ export {
   type Reading,
   type RowInfo,
 } from './rows';
+export { verify } from './published/verify';
 export { SIGNS, shownFactor } from './signs';
 export type { Peak, Piece, Quantity, Reaction, Residuals, Response, Sense, Side, Solution } from './solution';
 export { VERSION } from './version';

@@ -22,7 +22,7 @@ class FakeGlass extends EventTarget {
 
 function watch(glass: FakeGlass, announce?: (shown: () => void) => void) {
   const load = jest.fn();
-  whenShown(glass as unknown as Glass, load, announce);
+  whenShown(glass, load, announce);
   return load;
 }
 
