@@ -13,30 +13,37 @@ export function gatherLoads(beam: Evaluated): Load[] {
   return loads;
 }
 
-function loadOf(row: Placed, k: number, beam: Evaluated): Load | null {
-  const base = { row: row.row, case: row.case };
+/** Fields are written out, not spread from a common part: this runs for every load of every member of a schedule. */
+function loadOf(placed: Placed, k: number, beam: Evaluated): Load | null {
+  const { row, case: index } = placed;
   const value = beam.values[k]!;
-  switch (row.item) {
+  switch (placed.item) {
     case 'point':
-      return { ...base, kind: 'point', at: beam.from(row), force: value };
+      return { kind: 'point', row, case: index, at: beam.from(placed), force: value };
     case 'couple':
-      return { ...base, kind: 'couple', at: beam.from(row), couple: value };
-    case 'uniform': {
-      const law: Law = { kind: 'linear', start: value, end: value };
-      return { ...base, kind: 'distributed', from: beam.from(row), to: beam.to(row), law };
+      return { kind: 'couple', row, case: index, at: beam.from(placed), couple: value };
+    case 'uniform':
+    case 'varying': {
+      const law: Law = placed.item === 'varying' ? beam.law(k) : { kind: 'linear', start: value, end: value };
+      return { kind: 'distributed', row, case: index, from: beam.from(placed), to: beam.to(placed), law };
     }
-    case 'varying':
-      return { ...base, kind: 'distributed', from: beam.from(row), to: beam.to(row), law: beam.law(k) };
     case 'curvature':
-      return { ...base, kind: 'curvature', from: beam.from(row), to: beam.to(row), curvature: value };
+      return {
+        kind: 'curvature',
+        row,
+        case: index,
+        from: beam.from(placed),
+        to: beam.to(placed),
+        curvature: value,
+      };
     case 'axial':
-      return { ...base, kind: 'axial', force: value };
+      return { kind: 'axial', row, case: index, force: value };
     case 'camber':
-      return { ...base, kind: 'camber', from: beam.from(row), to: beam.to(row), rise: value };
+      return { kind: 'camber', row, case: index, from: beam.from(placed), to: beam.to(placed), rise: value };
     case 'settlement':
-      return { ...base, kind: 'settlement', at: beam.from(row), displacement: value };
+      return { kind: 'settlement', row, case: index, at: beam.from(placed), displacement: value };
     case 'rotation':
-      return { ...base, kind: 'rotation', at: beam.from(row), angle: value };
+      return { kind: 'rotation', row, case: index, at: beam.from(placed), angle: value };
     default:
       return null;
   }

@@ -122,10 +122,11 @@ function covers(ei: readonly Part[], parts: Record<'E' | 'I' | 'EI', Part[]>, be
     return;
   }
   let reached = beam.start;
-  for (const part of [...ei, { from: beam.end, to: beam.end }]) {
+  for (const part of ei) {
     if (part.from > reached) gap(reached, part.from, parts, beam);
     if (part.to > reached) reached = part.to;
   }
+  if (reached < beam.end) gap(reached, beam.end, parts, beam);
 }
 
 function gap(from: number, to: number, parts: Record<'E' | 'I' | 'EI', Part[]>, beam: Evaluated): void {
