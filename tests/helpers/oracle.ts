@@ -1,5 +1,5 @@
 /**
- * The oracle: every beam of src/beam/model.ts solved a second time, independently of src/integrate, in 60 or more decimal digits.
+ * The oracle: every beam of src/beam/model.ts solved a second time, independently of src/integrate, in 48 or more decimal digits (160 bits; more where joints stand close).
  *
  * Formulation: displacement method. Joints at every discontinuity; unknown deflections and rotations of the joints (two of either at a
  * release); stiffness matrices and end forces of the elements between them from power series (oracle-element.ts); symmetric banded
@@ -10,7 +10,7 @@
  * - camber: the initial shape is w = -4 r t (1 - t) over from..to; supports act on the movement v from that shape; the shown deflection
  *   is v + w. The shown slope is the rotation theta of the section plus w'.
  * - with axial force S is the vertical force on a section; V = dM/dx; a joint, a spring and a shear release deal with S.
- * - a function law is known only to double precision: it is replaced by interpolation at 17 points in short elements.
+ * - a function law is known only to double precision: it is replaced by interpolation at up to 17 points in short elements.
  */
 import type { BeamModel, Law } from '../../src/beam/model';
 import type { Quantity, Side } from '../../src/solution';
@@ -57,7 +57,7 @@ export function solveOracle(model: BeamModel, factors: readonly number[] | null 
   for (let i = 0; i + 1 < breaks.length; i++) shortest = Math.min(shortest, breaks[i + 1]! - breaks[i]!);
   const ratio = Math.log2((model.end - model.start) / shortest);
   // a displacement method loses about four times the digits of the length ratio
-  const wanted = bits ?? Math.min(900, 200 + Math.ceil(4 * ratio));
+  const wanted = bits ?? Math.min(900, 160 + Math.ceil(4 * ratio));
   return withBits(wanted, () => build(model, factors, breaks, wanted));
 }
 
