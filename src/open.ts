@@ -66,6 +66,19 @@ export function fail(...issues: Issue[]): never {
   throw new BeamProblem(issues, sayAll(issues));
 }
 
+/** The response to a combination; what keeps it from being solved is worded here. */
+export function respond(solution: Solution, factors: readonly number[] | null): Response {
+  try {
+    return solution.respond(factors);
+  } catch (problem) {
+    return problem instanceof BeamProblem ? fail(...problem.issues) : rethrow(problem);
+  }
+}
+
+function rethrow(problem: unknown): never {
+  throw problem;
+}
+
 /** A table with its names and values: read once, solved once. */
 class Member {
   private solved: SolveResult | null = null;
@@ -151,7 +164,7 @@ class Opened implements OpenBeam {
   }
 
   get response(): Response {
-    return (this.solvedResponse ??= this.member.solution().respond(this.combination?.factors ?? null));
+    return (this.solvedResponse ??= respond(this.member.solution(), this.combination?.factors ?? null));
   }
 
   show(quantity: Quantity, value: number): number {
@@ -169,9 +182,8 @@ function tableOf(beam: unknown): { table: CompiledTable; hash: number } {
   const known = tables.find(hash, beam);
   if (known !== undefined) return { table: known, hash };
   const copy = copyRange(beam);
-  const cells = (
-    Array.isArray(copy) ? copy.map((row: unknown) => (Array.isArray(row) ? row : [row])) : [[copy]]
-  ) as unknown[][];
+  const rows: unknown[] = Array.isArray(copy) ? copy : [copy];
+  const cells = rows.map((row): unknown[] => (Array.isArray(row) ? row : [row]));
   const table = compileTable(cells);
   tables.keep(hash, [copy], table, rangeBytes(copy) + BYTES_PER_ROW * table.rows.length);
   return { table, hash };

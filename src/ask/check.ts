@@ -7,7 +7,7 @@
  * overhang) over the divisor. Deflections are net of camber, as everywhere.
  */
 import type { BeamModel, Combination, Limit } from '../beam/model';
-import { fail, type OpenBeam } from '../open';
+import { fail, respond, type OpenBeam } from '../open';
 import { readLimit } from '../rows';
 import type { Solution } from '../solution';
 import { sag, spanName, spansOf, type Span } from './spans';
@@ -60,7 +60,7 @@ export function verdicts(model: BeamModel, solution: Solution, tests: readonly T
   const spans = spansOf(model);
   const found: Verdict[] = [];
   for (const test of tests) {
-    const response = solution.respond(test.combination?.factors ?? null);
+    const response = respond(solution, test.combination?.factors ?? null);
     for (const span of spans) {
       const worst = sag(response, span);
       const allowed = allowedOf(model, span, test);

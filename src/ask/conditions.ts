@@ -40,7 +40,7 @@ export function conditionsOf(open: OpenBeam, works: readonly RegionWork[]): Cond
     const after = works[i];
     const left = before === undefined ? null : stateOf(open, before, before.to - before.from);
     const right = after === undefined ? null : stateOf(open, after, 0);
-    const here = left ?? (right as State);
+    const here = left ?? right;
     const support = model.supports.find((one) => one.at === x);
     const reaction = all.find((one) => one.at === x);
     const released = (kind: 'moment' | 'shear'): boolean =>

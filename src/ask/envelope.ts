@@ -5,7 +5,7 @@
  */
 import type { BeamModel, Combination } from '../beam/model';
 import type { Issue } from '../issue';
-import { fail, type OpenBeam } from '../open';
+import { fail, respond, type OpenBeam } from '../open';
 import { readCombination } from '../rows';
 import { plain, shownFactor } from '../signs';
 import type { Quantity } from '../solution';
@@ -124,7 +124,7 @@ function layersFor(
   const factor = shownFactor(open.model, quantity);
   if (cases.size > 0) return layersOf(partLoads(open.model, cases), list, quantity, factor);
   return list.map((combination) => ({
-    fixed: fieldOf(open.solution.respond(combination?.factors ?? null).pieces(quantity), factor),
+    fixed: fieldOf(respond(open.solution, combination?.factors ?? null).pieces(quantity), factor),
     parts: [],
   }));
 }

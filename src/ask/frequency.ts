@@ -11,7 +11,7 @@
 import type { BeamModel, Combination, Load } from '../beam/model';
 import { solve } from '../integrate/solve';
 import { lawAt } from '../integrate/regions';
-import { fail, type OpenBeam } from '../open';
+import { fail, respond, type OpenBeam } from '../open';
 import { fieldOf, eachInterval, sortedOnce, valueAt } from './field';
 import { evaluate } from './polynomial';
 import { gauss } from './quadrature';
@@ -61,7 +61,7 @@ function quotient(model: BeamModel, combination: Combination | null): { work: nu
   );
   const result = solve({ ...model, loads: kept, limits: [] });
   const solution = result.ok ? result.solution : fail(result.issue);
-  const field = fieldOf(solution.respond(combination?.factors ?? null).pieces('deflection'));
+  const field = fieldOf(respond(solution, combination?.factors ?? null).pieces('deflection'));
 
   let work = 0;
   let inertia = 0;

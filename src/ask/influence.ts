@@ -17,8 +17,7 @@
  */
 import type { BeamModel, Load, Support } from '../beam/model';
 import { solve } from '../integrate/solve';
-import type { Issue } from '../issue';
-import { fail, type OpenBeam } from '../open';
+import { fail, respond, type OpenBeam } from '../open';
 import { readPosition } from '../rows';
 import { plain } from '../signs';
 import type { Response, Side } from '../solution';
@@ -73,7 +72,7 @@ export function supportAt(model: BeamModel, effect: Effect, x: number): Support 
 export function readSection(model: BeamModel, at: unknown): Section {
   const cell = single(at);
   const read = readPosition(cell === null || cell === undefined || cell === '' ? 0 : cell, model);
-  if (!read.ok) return fail({ ...read.issue, column: 'at' } as Issue);
+  if (!read.ok) return fail({ ...read.issue, column: 'at' });
   const side = read.x === model.start ? 'right' : read.x === model.end ? 'left' : read.side;
   return { x: read.x, side };
 }
@@ -85,7 +84,7 @@ export function bare(model: BeamModel): Load[] {
 
 export function respondTo(model: BeamModel, loads: readonly Load[]): Response {
   const result = solve({ ...model, cases: [], limits: [], loads: [...bare(model), ...loads] });
-  return result.ok ? result.solution.respond(null) : fail(result.issue);
+  return result.ok ? respond(result.solution, null) : fail(result.issue);
 }
 
 const NOBODY = { row: 0, case: -1 } as const;
@@ -158,7 +157,10 @@ export function reactionLines(model: BeamModel): ReactionLines {
   const line = (kind: 'settlement' | 'rotation', at: number): Segment[] | null => {
     const index = loads.findIndex((load) => load.kind === kind && load.at === at);
     if (index < 0) return null;
-    const response = solution.respond(loads.map((_, i) => (i === index ? 1 : 0)));
+    const response = respond(
+      solution,
+      loads.map((_, i) => (i === index ? 1 : 0)),
+    );
     return fieldOf(response.pieces('deflection'), kind === 'rotation' ? -1 : 1);
   };
   const at = model.supports.map((support) => support.at);

@@ -8,7 +8,7 @@
 import type { BeamModel, Combination, Load } from '../beam/model';
 import { solve } from '../integrate/solve';
 import { lawAt } from '../integrate/regions';
-import { fail } from '../open';
+import { fail, respond as respondTo } from '../open';
 import type { Quantity, Response } from '../solution';
 import { fieldOf, type Segment } from './field';
 
@@ -107,7 +107,7 @@ export function layersOf(
 function responder(model: BeamModel): (weights: readonly number[]) => Response {
   const result = solve(model);
   const solution = result.ok ? result.solution : fail(result.issue);
-  return (weights) => solution.respond(weights);
+  return (weights) => respondTo(solution, weights);
 }
 
 /** Second order: with the combination's axial force held, the rest adds up. The force becomes part of the beam. */

@@ -59,8 +59,9 @@ export function readWord<W extends string>(
 export function describe(cell: unknown): string {
   if (cell === null || cell === undefined || cell === '') return 'nothing';
   if (Array.isArray(cell)) return 'a range';
-  if (typeof cell === 'object') return 'a value that is not a plain number or text';
-  return String(cell as string | number | boolean);
+  if (typeof cell === 'string') return cell;
+  if (typeof cell === 'number' || typeof cell === 'boolean') return String(cell);
+  return 'a value that is not a plain number or text';
 }
 
 /** Spilled diagrams: this many equal steps over the beam when `points` is left out, besides every break. 40 steps draw a smooth curve on any chart. */
