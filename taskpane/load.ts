@@ -58,9 +58,10 @@ function hostAnnounces(shown: () => void): void {
 
 /** Fetches the pane; when that fails, says so where the pane would stand and offers another try. */
 function loadPane(): void {
-  import(/* webpackChunkName: "pane" */ './pane').catch((reason: unknown) => {
-    const place = document.getElementById('pane');
-    if (!place) throw reason;
+  const place = document.getElementById('pane');
+  if (!place) return;
+  const pane = import(/* webpackChunkName: "pane" */ './start').then(({ start }) => start(place));
+  pane.catch((reason: unknown) => {
     const notice = document.createElement('p');
     notice.setAttribute('role', 'alert');
     notice.textContent = `The pane could not be loaded (${reason instanceof Error ? reason.message : String(reason)}). The functions in the cells go on working. `;

@@ -1,0 +1,100 @@
+/**
+ * Puts texts where they do not cover each other. In a browser their widths are measured; without one (tests, golden files)
+ * they are estimated from a table of letter widths, so that a drawing is the same on every machine.
+ */
+
+export interface Box {
+  readonly left: number;
+  readonly top: number;
+  readonly width: number;
+  readonly height: number;
+}
+
+/** Widths in units of the font size, of a common sans-serif face. */
+function letterWidth(letter: string): number {
+  if (/[ilI.,;:'|!·\u202f]/.test(letter)) return 0.3;
+  if (/[ftjr()[\]/ \-⁻]/.test(letter)) return 0.36;
+  if (/[⁰¹²³⁴⁵⁶⁷⁸⁹]/.test(letter)) return 0.38;
+  if (/[mwMW@%]/.test(letter)) return 0.92;
+  if (/[A-Z=+−×<>≤≥]/.test(letter)) return 0.68;
+  return 0.57;
+}
+
+type Measure = (text: string, size: number) => number;
+let measure: Measure | null = null;
+
+/** Measures with a canvas in the face of an element, from now on; returns false where there is no canvas. */
+export function measureLike(element: Element): boolean {
+  let context: CanvasRenderingContext2D | null = null;
+  try {
+    context = document.createElement('canvas').getContext('2d');
+  } catch {
+    // no canvas here
+  }
+  if (!context) return false;
+  const face = getComputedStyle(element).fontFamily || 'sans-serif';
+  const known = new Map<string, number>();
+  const pen = context;
+  measure = (text, size) => {
+    const key = `${size} ${text}`;
+    let width = known.get(key);
+    if (width === undefined) {
+      pen.font = `${size}px ${face}`;
+      width = pen.measureText(text).width;
+      if (known.size > 2000) known.clear();
+      known.set(key, width);
+    }
+    return width;
+  };
+  return true;
+}
+
+export function textWidth(text: string, size: number): number {
+  if (measure) return measure(text, size) + 1;
+  let units = 0;
+  for (const letter of text) units += letterWidth(letter);
+  return units * size;
+}
+
+export function overlap(a: Box, b: Box, gap = 1): boolean {
+  return (
+    a.left < b.left + b.width + gap &&
+    b.left < a.left + a.width + gap &&
+    a.top < b.top + b.height + gap &&
+    b.top < a.top + a.height + gap
+  );
+}
+
+export class Placer {
+  private readonly taken: Box[] = [];
+  constructor(
+    private readonly left: number,
+    private readonly right: number,
+  ) {}
+
+  /** Moves a box sideways so that it stays inside the frame. */
+  inside(box: Box): Box {
+    const most = Math.max(this.left, this.right - box.width);
+    return { ...box, left: Math.min(Math.max(box.left, this.left), most) };
+  }
+
+  free(box: Box): boolean {
+    return !this.taken.some((other) => overlap(box, other));
+  }
+
+  take(box: Box): void {
+    this.taken.push(box);
+  }
+
+  /** The first of the wishes (moved inside the frame) that is free; taken at once. null when none is. */
+  first(wishes: readonly Box[]): Box | null {
+    for (const wish of wishes) {
+      const box = this.inside(wish);
+      if (this.free(box)) {
+        this.take(box);
+        return box;
+      }
+    }
+    return null;
+  }
+}

@@ -1,0 +1,153 @@
+/** From the subject behind a cell to everything the views show: one call of the engine, nothing remembered here. */
+import {
+  ask,
+  BeamProblem,
+  readPosition,
+  reviewBeam,
+  say,
+  spansOf,
+  type BeamModel,
+  type Issue,
+  type OpenBeam,
+  type Response,
+  type Review,
+} from './engine';
+import type { DrawingInput, LimitLine } from './drawing/frame';
+import type { Subject } from './follow';
+
+export interface Reviewed {
+  readonly subject: Subject;
+  readonly review: Review;
+  readonly issues: readonly Issue[];
+  readonly cautions: readonly string[];
+  /** messages by 0-based row of the range */
+  readonly byRow: ReadonlyMap<number, readonly string[]>;
+  readonly open: OpenBeam | null;
+  readonly model: BeamModel | null;
+  readonly drawing: DrawingInput | null;
+  readonly checks: readonly Check[];
+  /** positions the formula asks at */
+  readonly marks: readonly number[];
+}
+
+/** One line of CHECK, in the reader's units. */
+export interface Check {
+  readonly span: string;
+  readonly deflection: number;
+  readonly at: number;
+  readonly allowed: number;
+  readonly used: number;
+  readonly exceeded: boolean;
+  readonly limit: string;
+}
+
+const MARKS_MOST = 60;
+
+function marksOf(subject: Subject, model: BeamModel): number[] {
+  const marks: number[] = [];
+  for (const raw of subject.x.slice(0, MARKS_MOST)) {
+    if (raw === null || raw === undefined || raw === '') continue;
+    const read = readPosition(raw, model);
+    if (read.ok) marks.push(read.x);
+  }
+  return [...new Set(marks)];
+}
+
+/** Asks CHECK for its lines; a beam without limits has none, which is no fault. */
+function checksOf(open: OpenBeam, limit: unknown): { checks: Check[]; issues: readonly Issue[] } {
+  const wanted = limit !== null && limit !== undefined && limit !== '' && limit !== 0;
+  if (!wanted && open.model.limits.length === 0) return { checks: [], issues: [] };
+  try {
+    const [, ...rows] = ask.check(open, limit);
+    const checks = rows
+      .filter((row) => !String(row[0]).startsWith('governs:'))
+      .map((row): Check => ({
+        span: String(row[0]),
+        deflection: Number(row[1]),
+        at: Number(row[2]),
+        allowed: Number(row[3]),
+        used: Number(row[4]),
+        exceeded: row[6] === 'exceeded',
+        limit: String(row[7]),
+      }));
+    return { checks, issues: [] };
+  } catch (problem) {
+    if (problem instanceof BeamProblem) return { checks: [], issues: problem.issues };
+    throw problem;
+  }
+}
+
+/** CHECK lists every span for every limit, spans from left to right: the tightest limit of each span is drawn. */
+function limitLines(model: BeamModel, checks: readonly Check[]): LimitLine[] {
+  const spans = spansOf(model);
+  return spans.flatMap((span, i) => {
+    const here = checks.filter((check, k) => k % spans.length === i && check.allowed > 0);
+    const tightest = [...here].sort((a, b) => a.allowed - b.allowed)[0];
+    if (!tightest) return [];
+    const { from, to, chord } = span;
+    return [{ from, to, chord, allowed: tightest.allowed, text: tightest.limit }];
+  });
+}
+
+export function reviewSubject(subject: Subject): Reviewed {
+  return reviewCells(subject, subject.cells);
+}
+
+/** The same beam with other rows: a draft while it is typed. */
+export function reviewCells(subject: Subject, cells: readonly (readonly unknown[])[]): Reviewed {
+  const review = reviewBeam({ ...subject.args, beam: cells });
+  const { open } = review;
+  const model = review.model;
+  const issues: Issue[] = [...review.issues];
+  let checks: Check[] = [];
+  if (open) {
+    const found = checksOf(open, subject.limit);
+    checks = found.checks;
+    issues.push(...found.issues);
+  }
+  const marks = model ? marksOf(subject, model) : [];
+  const byRow = new Map<number, string[]>();
+  const note = (issue: Issue): void => {
+    if (issue.row === undefined) return;
+    const words = byRow.get(issue.row - 1) ?? [];
+    words.push(say(issue));
+    byRow.set(issue.row - 1, words);
+  };
+  issues.forEach(note);
+  open?.cautions.forEach(note);
+  return {
+    subject,
+    review,
+    issues,
+    cautions: (open?.cautions ?? []).map(say),
+    byRow,
+    open,
+    model,
+    drawing: model ? drawingOf(review, model, open, marks, limitLines(model, checks)) : null,
+    checks,
+    marks,
+  };
+}
+
+function drawingOf(
+  review: Review,
+  model: BeamModel,
+  open: OpenBeam | null,
+  marks: readonly number[],
+  limits: readonly LimitLine[],
+): DrawingInput {
+  const words = new Map(review.table.rows.map((row) => [row.row, row.cells.Item]));
+  const response: Response | null = open ? open.response : null;
+  return {
+    model,
+    response,
+    factors: open?.combination?.factors ?? null,
+    show: (quantity, value) => (open ? open.show(quantity, value) : value),
+    word: (row) => {
+      const word = words.get(row);
+      return typeof word === 'string' ? word : '';
+    },
+    marks,
+    limits,
+  };
+}

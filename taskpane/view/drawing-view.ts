@@ -1,0 +1,178 @@
+/** The drawing with its crosshair, what it states about itself, and its options. */
+import { h, put } from '../dom';
+import { makeCrosshair, type Crosshair } from '../drawing/crosshair';
+import { draw, type Drawing } from '../drawing/drawing';
+import { measureLike } from '../drawing/labels';
+import { DIAGRAMS, type DrawingInput, type Part } from '../drawing/frame';
+import { PLAIN, formatNumber } from '../numbers';
+import type { Separators } from '../port';
+import type { Settings } from '../settings';
+import { texts } from '../texts';
+
+const WIDTH_LEAST = 240;
+const WIDTH_MOST = 760;
+
+export class DrawingView {
+  private readonly stage = h('div', { class: 'sp-stage' });
+  private readonly notes = h('p', { class: 'sp-notes' });
+  private readonly choices: HTMLElement;
+  readonly element: HTMLElement;
+  private input: DrawingInput | null = null;
+  private beamOnly = false;
+  private separators: Separators = PLAIN;
+  private crosshair: Crosshair | null = null;
+  private drawn: Drawing | null = null;
+  private width = 0;
+  private measured = false;
+  private readonly observer: ResizeObserver | null;
+
+  constructor(
+    private readonly settings: Settings,
+    /** more buttons under the options (export, place in the sheet) */
+    extra: HTMLElement,
+  ) {
+    this.choices = this.buildChoices(extra);
+    this.element = h('div', { class: 'sp-figure' }, this.stage, this.notes, this.choices);
+    this.observer =
+      typeof ResizeObserver === 'undefined'
+        ? null
+        : new ResizeObserver(() => {
+            if (Math.abs(this.measure() - this.width) >= 1) this.render();
+          });
+    this.observer?.observe(this.stage);
+  }
+
+  dispose(): void {
+    this.observer?.disconnect();
+  }
+
+  get current(): { input: DrawingInput; drawing: Drawing; separators: Separators } | null {
+    return this.input && this.drawn
+      ? { input: this.input, drawing: this.drawn, separators: this.separators }
+      : null;
+  }
+
+  show(input: DrawingInput | null, separators: Separators, beamOnly: boolean): void {
+    this.input = input;
+    this.separators = separators;
+    this.beamOnly = beamOnly;
+    this.render();
+  }
+
+  private measure(): number {
+    const width = this.stage.clientWidth || 350;
+    return Math.min(Math.max(width, WIDTH_LEAST), WIDTH_MOST);
+  }
+
+  private render(): void {
+    const { input, settings } = this;
+    if (!input) {
+      put(this.stage);
+      put(this.notes);
+      this.drawn = null;
+      this.crosshair = null;
+      this.element.hidden = true;
+      return;
+    }
+    this.element.hidden = false;
+    this.width = this.measure();
+    this.measured ||= this.element.isConnected && measureLike(this.stage);
+    const parts: Part[] = ['beam'];
+    if (!this.beamOnly) parts.push(...DIAGRAMS.filter((quantity) => !settings.hidden.includes(quantity)));
+    const options = {
+      width: this.width,
+      parts,
+      momentBelow: settings.momentBelow,
+      enlarged: settings.enlarged,
+      separators: this.separators,
+    };
+    const kept = this.crosshair?.element === document.activeElement ? (this.crosshair?.at ?? null) : null;
+    const hadFocus = this.crosshair?.element === document.activeElement;
+    const drawing = draw(input, options);
+    const start = input.marks?.[0] ?? null;
+    this.drawn = drawing;
+    const pieces: Node[] = [drawing.root];
+    this.crosshair = null;
+    if (input.response && !this.beamOnly && drawing.diagrams.length > 0) {
+      this.crosshair = makeCrosshair(drawing, input, options, start, () => undefined);
+      pieces.push(this.crosshair.element);
+    }
+    put(this.stage, pieces);
+    if (hadFocus && this.crosshair) {
+      this.crosshair.element.focus();
+      if (kept !== null) this.crosshair.move(kept);
+    }
+    this.choices.hidden = this.beamOnly;
+    put(this.notes, this.beamOnly ? '' : this.statements(drawing, parts).join(' '));
+    this.notes.hidden = this.beamOnly || drawing.diagrams.length === 0;
+  }
+
+  private statements(drawing: Drawing, parts: readonly Part[]): string[] {
+    const words: string[] = [];
+    if (parts.includes('moment')) {
+      words.push(this.settings.momentBelow ? texts.view.momentBelow : texts.view.momentAbove);
+    }
+    const factor = drawing.exaggeration;
+    if (factor !== null) {
+      const number = formatNumber(factor, this.separators, 2);
+      words.push(factor >= 1 ? texts.view.exaggerated(number) : texts.view.reduced(number));
+    }
+    if (drawing.beam?.drawing.varies) words.push(texts.view.depth);
+    return words;
+  }
+
+  private buildChoices(extra: HTMLElement): HTMLElement {
+    const { settings } = this;
+    const change = (run: () => void): (() => void) => {
+      return () => {
+        run();
+        settings.save();
+        this.render();
+      };
+    };
+    const boxes = DIAGRAMS.map((quantity) => {
+      const box = h('input', { type: 'checkbox' });
+      box.checked = !settings.hidden.includes(quantity);
+      box.addEventListener(
+        'change',
+        change(() => {
+          settings.hidden = box.checked
+            ? settings.hidden.filter((one) => one !== quantity)
+            : [...settings.hidden, quantity];
+        }),
+      );
+      return h('label', { class: 'sp-choice' }, box, texts.quantity[quantity]);
+    });
+    const large = h(
+      'select',
+      { class: 'sp-select' },
+      h('option', { value: '' }, texts.view.none),
+      DIAGRAMS.map((quantity) => h('option', { value: quantity }, texts.quantity[quantity])),
+    );
+    large.value = settings.enlarged ?? '';
+    large.addEventListener(
+      'change',
+      change(() => {
+        settings.enlarged = DIAGRAMS.find((quantity) => quantity === large.value) ?? null;
+      }),
+    );
+    const below = h('input', { type: 'checkbox' });
+    below.checked = settings.momentBelow;
+    below.addEventListener(
+      'change',
+      change(() => {
+        settings.momentBelow = below.checked;
+      }),
+    );
+    return h(
+      'details',
+      { class: 'sp-fold' },
+      h('summary', null, texts.view.options),
+      h('fieldset', { class: 'sp-set' }, h('legend', null, texts.view.show), boxes),
+      h('label', { class: 'sp-line' }, h('span', null, texts.view.enlarge), large),
+      h('label', { class: 'sp-choice' }, below, texts.view.below),
+      h('p', { class: 'sp-quiet' }, texts.view.keys),
+      extra,
+    );
+  }
+}

@@ -1,0 +1,174 @@
+/** The rows of the shown beam in the editor, and the way back to the sheet. */
+import { h, put } from '../dom';
+import { addressFrom } from '../address';
+import type { ColumnName } from '../engine';
+import type { Area, Separators, WorkbookPort } from '../port';
+import type { Reviewed } from '../review';
+import { makeDraft, type Draft } from '../rows/draft';
+import { RowsEditor } from '../rows/editor';
+import { COLUMNS, guideOf } from '../rows/guide';
+import { rowsText } from '../rows/text-form';
+import { writeBack, type AskPerson } from '../rows/write-back';
+import { texts } from '../texts';
+
+export interface RowsEvents {
+  preview(draft: Draft): void;
+  written(words: string): void;
+  failed(reason: unknown): void;
+}
+
+/** How rows stand in the workbook. */
+type Form = 'cells' | 'text' | 'fixed';
+
+export class RowsView {
+  readonly element: HTMLElement;
+  private readonly editor: RowsEditor;
+  private readonly note = h('p', { class: 'sp-quiet' });
+  private source: Area | null = null;
+  private form: Form = 'fixed';
+  private columns: readonly (ColumnName | null)[] = [];
+  private reading = 0;
+  private queue: Promise<void> = Promise.resolve();
+
+  constructor(
+    private readonly port: WorkbookPort,
+    private readonly ask: AskPerson,
+    private readonly events: RowsEvents,
+  ) {
+    this.editor = new RowsEditor({
+      preview: (draft) => {
+        if (this.form === 'cells') this.events.preview(draft);
+      },
+      commit: (before, after) => this.commit(before, after),
+      row: () => undefined,
+    });
+    this.element = h('div', { class: 'sp-rows-view' }, this.editor.element, this.note);
+  }
+
+  show(reviewed: Reviewed, separators: Separators): void {
+    const { subject, review } = reviewed;
+    const reading = ++this.reading;
+    const single = subject.cells.length === 1 && subject.cells[0]?.length === 1;
+    const units = review.model?.units ?? null;
+    const system = units ?? unitsRow(reviewed);
+    const rest = { system, cases: review.model?.cases ?? [], separators };
+    if (single) {
+      const values = review.table.rows.map((row) => COLUMNS.map((name) => row.cells[name] ?? null));
+      this.form = subject.source ? 'text' : 'fixed';
+      this.source = subject.source;
+      this.columns = COLUMNS;
+      const draft = makeDraft(
+        values,
+        values.map((row) => row.map(() => '')),
+        0,
+      );
+      // one more row can always be written into a text
+      this.editor.show({
+        ...rest,
+        draft: { ...draft, capacity: draft.rows.length + 100 },
+        columns: COLUMNS,
+        readOnly: !subject.source,
+      });
+      this.say(reviewed);
+      this.explain(subject.source ? '' : texts.rows.readOnlyFormula);
+      return;
+    }
+    this.columns = review.table.layout.columns;
+    const head = review.table.layout.header ? 1 : 0;
+    const { source } = subject;
+    if (!source) {
+      this.form = 'fixed';
+      this.source = null;
+      const blank = subject.cells.map((row) => row.map(() => ''));
+      this.editor.show({
+        ...rest,
+        draft: makeDraft(subject.cells, blank, head),
+        columns: this.columns,
+        readOnly: true,
+      });
+      this.say(reviewed);
+      this.explain(texts.rows.readOnlyJoined);
+      return;
+    }
+    void this.port.read([source]).then(
+      ([block]) => {
+        if (reading !== this.reading) return;
+        this.form = 'cells';
+        this.source = source;
+        const formulas = subject.cells.map((row, i) =>
+          row.map((_, j) =>
+            block
+              ? (block.formulas[i + source.row - block.area.row]?.[j + source.column - block.area.column] ??
+                '')
+              : '',
+          ),
+        );
+        this.editor.show({
+          ...rest,
+          draft: makeDraft(subject.cells, formulas, head),
+          columns: this.columns,
+          readOnly: false,
+        });
+        this.say(reviewed);
+        const missing = COLUMNS.filter((name) => !this.columns.includes(name));
+        this.explain(
+          missing.length > 0 ? texts.rows.missing(missing.map((name) => texts.columns[name]).join(', ')) : '',
+        );
+      },
+      (reason: unknown) => this.events.failed(reason),
+    );
+  }
+
+  /** Messages of a review, at their rows. */
+  say(reviewed: Reviewed): void {
+    this.editor.say(reviewed.byRow);
+  }
+
+  private explain(words: string): void {
+    put(this.note, words);
+    this.note.hidden = words === '';
+  }
+
+  /** Steps reach the sheet one after the other, in the order they were made. */
+  private commit(before: Draft, after: Draft): void {
+    this.queue = this.queue
+      .then(() => this.write(before, after))
+      .catch((reason: unknown) => {
+        this.editor.takeBack();
+        this.events.failed(reason);
+      });
+  }
+
+  private async write(before: Draft, after: Draft): Promise<void> {
+    const { source, form } = this;
+    if (!source) return;
+    if (form === 'text') {
+      const rows = after.rows.map((row) =>
+        Object.fromEntries(COLUMNS.map((name, i) => [name, row[i]?.value ?? null])),
+      );
+      const text = rowsText(rows);
+      await this.port.write([{ area: source, cells: [[text]] }], {
+        own: [source],
+        label: texts.rows.undoLabel,
+      });
+      this.events.written(texts.rows.written(addressFrom(source, source.sheet)));
+      return;
+    }
+    const outcome = await writeBack(this.port, source, before, after, this.ask);
+    if (outcome.kind === 'cancelled') {
+      this.editor.takeBack();
+      return;
+    }
+    if (outcome.kind === 'nothing') return;
+    this.source = outcome.source;
+    this.events.written(texts.rows.written(addressFrom(outcome.source, outcome.source.sheet)));
+  }
+}
+
+/** The units row as written, for hints while the table has errors and no model. */
+function unitsRow(reviewed: Reviewed): { force: string; length: string; deflection: string } | null {
+  const row = reviewed.review.table.rows.find((one) => guideOf(one.cells.Item)?.word === 'units');
+  if (!row) return null;
+  const text = (value: unknown): string => (typeof value === 'string' ? value : '');
+  return { force: text(row.cells.At), length: text(row.cells.To), deflection: text(row.cells.Value) };
+}
