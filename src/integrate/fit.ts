@@ -69,8 +69,15 @@ export function fitPiece(
     c[k] = (sum * (k === 0 || k === N ? 1 : 2)) / N;
     largest = Math.max(largest, Math.abs(c[k]!));
   }
+  // A value cannot be known better than the rounding of x inside the law lets it: eps |x| |f'|. Near a root of 1 - x/L that, not
+  // the value's own rounding, is where the coefficients level off.
+  let steepest = 0;
+  for (let j = 0; j < N; j++) {
+    steepest = Math.max(steepest, Math.abs(y[j + 1]! - y[j]!) / (half * (cos[j]! - cos[j + 1]!)));
+  }
+  const level = TAIL * largest + 8 * 2 ** -52 * Math.max(Math.abs(a), Math.abs(b)) * steepest;
   if (!force) {
-    for (let k = N - 2; k <= N; k++) if (Math.abs(c[k]!) > TAIL * largest) return { state: 'too-long' };
+    for (let k = N - 2; k <= N; k++) if (Math.abs(c[k]!) > level) return { state: 'too-long' };
   }
   let top = N;
   while (top > 0 && Math.abs(c[top]!) <= 2 ** -54 * largest) top--;
@@ -90,7 +97,7 @@ export function fitPiece(
       const value = f(a + (u + 0.5) * (b - a));
       let sum = 0;
       for (let k = top; k >= 0; k--) sum = sum * u + poly[k]!;
-      if (Math.abs(sum - value) > 8 * TAIL * largest) return { state: 'too-long' };
+      if (Math.abs(sum - value) > 8 * level) return { state: 'too-long' };
     }
   }
   return { state: 'fitted', poly };

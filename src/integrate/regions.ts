@@ -39,7 +39,9 @@ export interface Cut {
 const MAX_GROWTH = 1;
 /** A region is halved at most this often while laws are fitted: then a kink in a law weighs less than (2^-30)^2 of the region. */
 const MAX_HALVINGS = 30;
-const MAX_REGIONS = 60000;
+/** Pieces one stretch may be cut into: for its laws (a law that is still not smooth then never will be), and for a stiff foundation. */
+const MAX_PIECES = 2000;
+const MAX_STIFF_PIECES = 20000;
 
 export function cutBeam(
   model: BeamModel,
@@ -124,6 +126,8 @@ function cutStretch(
   const gaConstant = ga ? constantOf(ga) : null;
   const flexibility = (stretch: SectionStretch, extra: number) => (x: number) =>
     1 / (lawAt(stretch, x) + extra);
+  const before = regions.length;
+  let blamed: Blame = ei;
   const positive = (y: number): boolean => y > 0 && Number.isFinite(y);
   try {
     if (eiConstant !== null) need(positive(1 / eiConstant), ei, a);
@@ -155,11 +159,8 @@ function cutStretch(
       let fPoly: Poly | null = null;
       let gPoly: Poly | null = null;
       const pieces: [Load, Poly][] = [];
-      const fit = (
-        law: (x: number) => number,
-        accept: (y: number) => boolean,
-        blame: { rows?: readonly number[]; row?: number },
-      ): Poly | null => {
+      const fit = (law: (x: number) => number, accept: (y: number) => boolean, blame: Blame): Poly | null => {
+        blamed = blame;
         const result = fitPiece(law, from, to, accept, force);
         if (result.state === 'bad') throw new BadLaw(badLaw(blame, result.x));
         return result.state === 'fitted' ? result.poly : null;
@@ -183,9 +184,11 @@ function cutStretch(
         }
       }
       if (split) {
-        if (regions.length > MAX_REGIONS) throw new BadLaw(tooMany(from, growth > MAX_GROWTH));
-        const parts = growth > MAX_GROWTH ? Math.min(Math.ceil(growth / MAX_GROWTH), MAX_REGIONS + 1) : 2;
-        if (regions.length + parts > MAX_REGIONS) throw new BadLaw(tooMany(from, growth > MAX_GROWTH));
+        const stiff = growth > MAX_GROWTH;
+        const parts = stiff ? Math.ceil(growth / MAX_GROWTH) : 2;
+        if (!(regions.length - before + parts <= (stiff ? MAX_STIFF_PIECES : MAX_PIECES))) {
+          throw new BadLaw(stiff ? tooStiff(from) : badLaw(blamed, from));
+        }
         let left = from;
         for (let i = 1; i <= parts; i++) {
           const right = i === parts ? to : from + (h * i) / parts;
@@ -219,11 +222,13 @@ function need(good: boolean, stretch: SectionStretch, x: number): void {
   if (!good) throw new BadLaw(badLaw(stretch, x));
 }
 
-function badLaw(blame: { rows?: readonly number[]; row?: number }, x: number): Issue {
+type Blame = { readonly rows?: readonly number[]; readonly row?: number };
+
+function badLaw(blame: Blame, x: number): Issue {
   const row = blame.row ?? blame.rows?.[blame.rows.length - 1];
   return { code: 'bad-law', kind: 'invalid', row, column: 'Value', detail: { x } };
 }
 
-function tooMany(x: number, stiff: boolean): Issue {
-  return { code: stiff ? 'too-stiff' : 'bad-law', kind: 'unavailable', column: 'Value', detail: { x } };
+function tooStiff(x: number): Issue {
+  return { code: 'too-stiff', kind: 'unavailable', column: 'Value', detail: { x } };
 }

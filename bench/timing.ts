@@ -1,0 +1,70 @@
+/**
+ * Timing for the benches: warmed, repeated, reported as median and spread, compared as ratios inside one run. Times are CPU time of
+ * this process, so that a busy machine disturbs them less; results are summed and printed into nothing, so that no work is optimised away.
+ */
+export interface Timing {
+  /** microseconds per call */
+  readonly median: number;
+  /** half the distance between the quartiles, relative to the median */
+  readonly spread: number;
+}
+
+let sink = 0;
+
+export function measure(f: () => number, minimumMilliseconds = 40, repeats = 9): Timing {
+  // warm up and find a batch that takes long enough to be read off the clock
+  let batch = 1;
+  for (;;) {
+    const spent = run(f, batch);
+    if (spent >= minimumMilliseconds * 1000 || batch > 1e7) break;
+    batch = Math.max(
+      batch + 1,
+      Math.ceil(batch * Math.min(10, (minimumMilliseconds * 1200) / Math.max(spent, 50))),
+    );
+  }
+  const times: number[] = [];
+  for (let i = 0; i < repeats; i++) times.push(run(f, batch) / batch);
+  times.sort((a, b) => a - b);
+  const at = (q: number): number => times[Math.min(times.length - 1, Math.floor(q * times.length))]!;
+  return { median: at(0.5), spread: (at(0.75) - at(0.25)) / 2 / at(0.5) };
+}
+
+/** microseconds of CPU time for `batch` calls */
+function run(f: () => number, batch: number): number {
+  const before = process.cpuUsage();
+  let sum = 0;
+  for (let i = 0; i < batch; i++) sum += f();
+  const spent = process.cpuUsage(before);
+  sink += Number.isFinite(sum) ? 1e-300 * sum : 0;
+  return spent.user + spent.system;
+}
+
+export function show(name: string, timing: Timing, note = ''): void {
+  const us = timing.median < 1 ? timing.median.toFixed(3) : timing.median.toFixed(1);
+  console.log(`  ${name.padEnd(64)} ${us.padStart(10)} us  +-${(100 * timing.spread).toFixed(0)} %  ${note}`);
+}
+
+/** A ratio against the target of the issue; `atLeast` or `atMost`. */
+export function ratio(name: string, value: number, target: { atLeast?: number; atMost?: number }): void {
+  const met =
+    (target.atLeast === undefined || value >= target.atLeast) &&
+    (target.atMost === undefined || value <= target.atMost);
+  const wanted =
+    target.atLeast !== undefined ? `at least ${target.atLeast}` : `at most ${target.atMost ?? Infinity}`;
+  console.log(`  -> ${name}: ${value.toPrecision(3)} (${wanted}) ${met ? 'met' : 'NOT MET'}`);
+}
+
+/** Small seeded generator (mulberry32) so that every run measures the same beams. */
+export function seeded(seed: number): () => number {
+  let a = seed >>> 0;
+  return () => {
+    a = (a + 0x6d2b79f5) >>> 0;
+    let t = Math.imul(a ^ (a >>> 15), a | 1);
+    t = (t + Math.imul(t ^ (t >>> 7), t | 61)) ^ t;
+    return ((t ^ (t >>> 14)) >>> 0) / 4294967296;
+  };
+}
+
+export function total(): number {
+  return sink;
+}
