@@ -92,7 +92,7 @@ export function call(id: string, args: readonly unknown[], blanks: Blanks = null
   if (!described || !body) throw new Error(`no function ${id}`);
   if (args.length > described.parameters.length) throw new Error(`too many arguments for ${id}`);
   const delivered = described.parameters.map((parameter, i) => {
-    const given = args[i] ?? OMITTED;
+    const given = i < args.length ? args[i] : OMITTED;
     if (given === OMITTED) {
       if (!parameter.optional) throw new Error(`${id} needs ${parameter.name}`);
       return null;
