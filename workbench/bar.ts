@@ -3,10 +3,10 @@ import type { BlankCells } from './host';
 import type { Choice } from './theme';
 
 export interface BarActions {
-  open(file: File): void;
-  save(): void;
-  blankCells(habit: BlankCells): void;
-  colours(choice: Choice): void;
+  readonly open: (file: File) => void;
+  readonly save: () => void;
+  readonly blankCells: (habit: BlankCells) => void;
+  readonly colours: (choice: Choice) => void;
 }
 
 export interface Bar {
@@ -103,7 +103,8 @@ function chooser<T extends string>(
   const select = document.createElement('select');
   select.id = id;
   select.title = hint;
-  for (const [value, words] of options) select.add(new Option(words, value, value === chosen, value === chosen));
+  for (const [value, words] of options)
+    select.add(new Option(words, value, value === chosen, value === chosen));
   select.addEventListener('change', () => act(select.value as T));
   return group([label, select]);
 }

@@ -72,8 +72,9 @@ const FORCED_STRING = 4;
 export function plainOf(cell: Nullable<ICellData>): Plain {
   const value = cell?.v;
   if (value === undefined || value === null) return null;
-  if (cell?.t === BOOLEAN) return value === 1 || value === true || value === 'TRUE' || value === '1';
-  if ((cell?.t === STRING || cell?.t === FORCED_STRING) && typeof value !== 'string') return String(value);
+  const type = Number(cell?.t);
+  if (type === BOOLEAN) return value === 1 || value === true || value === 'TRUE' || value === '1';
+  if ((type === STRING || type === FORCED_STRING) && typeof value !== 'string') return String(value);
   return value;
 }
 
@@ -168,9 +169,17 @@ export class Book {
   spillOrigin(sheet: Worksheet, row: number, column: number): { row: number; column: number } | null {
     const ranges = this.formulas.getArrayFormulaRange()[this.id]?.[sheet.getSheetId()] ?? {};
     for (const [originRow, columns] of Object.entries(ranges))
-      for (const [originColumn, range] of Object.entries((columns ?? {}) as Record<string, Nullable<IRange>>)) {
+      for (const [originColumn, range] of Object.entries(
+        (columns ?? {}) as Record<string, Nullable<IRange>>,
+      )) {
         if (!range) continue;
-        if (row < range.startRow || row > range.endRow || column < range.startColumn || column > range.endColumn) continue;
+        if (
+          row < range.startRow ||
+          row > range.endRow ||
+          column < range.startColumn ||
+          column > range.endColumn
+        )
+          continue;
         return { row: Number(originRow), column: Number(originColumn) };
       }
     return null;
@@ -179,14 +188,24 @@ export class Book {
   /** Every cell that holds a value or a formula of its own, row by row (spilled-into cells are not among them). */
   *cells(sheet: Worksheet): Generator<BookCell> {
     const matrix = sheet.getCellMatrix().getMatrix();
-    const byRow = Object.keys(matrix).map(Number).sort((a, b) => a - b);
+    const byRow = Object.keys(matrix)
+      .map(Number)
+      .sort((a, b) => a - b);
     for (const row of byRow) {
-      const columns = Object.keys(matrix[row] ?? {}).map(Number).sort((a, b) => a - b);
+      const columns = Object.keys(matrix[row] ?? {})
+        .map(Number)
+        .sort((a, b) => a - b);
       for (const column of columns) {
         const value = plainOf(matrix[row]?.[column]);
         const formula = this.formulaAt(sheet, row, column);
         if (value === null && formula === null) continue;
-        yield { row, column, value, formula, spill: formula === null ? null : this.spillOf(sheet, row, column) };
+        yield {
+          row,
+          column,
+          value,
+          formula,
+          spill: formula === null ? null : this.spillOf(sheet, row, column),
+        };
       }
     }
   }
@@ -213,7 +232,8 @@ export class Book {
     }
     const spills = this.formulas.getArrayFormulaRange()[this.id]?.[sheet.getSheetId()] ?? {};
     for (const columns of Object.values(spills))
-      for (const range of Object.values((columns ?? {}) as Record<string, Nullable<IRange>>)) if (range) include(range);
+      for (const range of Object.values((columns ?? {}) as Record<string, Nullable<IRange>>))
+        if (range) include(range);
     return endRow < 0 ? null : { startRow, startColumn, endRow, endColumn };
   }
 
@@ -228,7 +248,10 @@ export class Book {
     return Object.values(this.names.getDefinedNameMap(this.id) ?? {}).map((one) => ({
       name: one.name,
       refersTo: one.formulaOrRefString.replace(/^=/, ''),
-      sheet: this.sheets().find((sheet) => sheet.getSheetId() === one.localSheetId)?.getName() ?? null,
+      sheet:
+        this.sheets()
+          .find((sheet) => sheet.getSheetId() === one.localSheetId)
+          ?.getName() ?? null,
     }));
   }
 
@@ -243,7 +266,8 @@ export class Book {
           if (spill === null) continue;
           for (let row = spill.startRow; row <= spill.endRow; row++)
             for (let column = spill.startColumn; column <= spill.endColumn; column++)
-              if (row !== ownRow || column !== ownColumn) spilled.push({ row, column, value: this.valueAt(sheet, row, column) });
+              if (row !== ownRow || column !== ownColumn)
+                spilled.push({ row, column, value: this.valueAt(sheet, row, column) });
         }
         return { id: sheet.getSheetId(), name: sheet.getName(), cells, spilled };
       }),

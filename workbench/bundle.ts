@@ -98,6 +98,7 @@ export function assembleBundle(
 export function evaluateBundle(code: string, metadataText: string): FunctionsBundle {
   const functions = new Map<string, CustomFunction>();
   // The bundle is our own build output, the same file the page loads by a script element.
+  // eslint-disable-next-line @typescript-eslint/no-implied-eval
   const run = new Function('CustomFunctions', code) as (shim: CustomFunctionsShim) => void;
   run(createShim(functions));
   return assembleBundle(JSON.parse(metadataText) as { functions: FunctionMetadata[] }, functions);
@@ -107,7 +108,10 @@ export function evaluateBundle(code: string, metadataText: string): FunctionsBun
 export async function loadBundle(base: string): Promise<FunctionsBundle> {
   const functions = new Map<string, CustomFunction>();
   (globalThis as { CustomFunctions?: unknown }).CustomFunctions = createShim(functions);
-  const [metadata] = await Promise.all([fetchJson(`${base}functions.json`), loadScript(`${base}functions.js`)]);
+  const [metadata] = await Promise.all([
+    fetchJson(`${base}functions.json`),
+    loadScript(`${base}functions.js`),
+  ]);
   return assembleBundle(metadata as { functions: FunctionMetadata[] }, functions);
 }
 

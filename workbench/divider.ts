@@ -27,7 +27,8 @@ export function wireDivider(divider: HTMLElement, desk: HTMLElement): { setWidth
     event.preventDefault();
   });
   divider.addEventListener('pointermove', (event) => {
-    if (divider.hasPointerCapture(event.pointerId)) setWidth(desk.getBoundingClientRect().right - event.clientX);
+    if (divider.hasPointerCapture(event.pointerId))
+      setWidth(desk.getBoundingClientRect().right - event.clientX);
   });
   for (const ended of ['pointerup', 'pointercancel'] as const)
     divider.addEventListener(ended, () => divider.classList.remove('dragging'));

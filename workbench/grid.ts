@@ -24,7 +24,7 @@ const HOVER_DELAY = 140;
 
 export interface Grid {
   readonly book: Book;
-  setDark(dark: boolean): void;
+  readonly setDark: (dark: boolean) => void;
 }
 
 export function createGrid(container: HTMLElement, bundle: FunctionsBundle): Grid {

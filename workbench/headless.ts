@@ -30,7 +30,11 @@ export interface Headless {
 export function createHeadless(bundle: FunctionsBundle, options: HeadlessOptions = {}): Headless {
   switchOffColumnIndex();
   const host = createHost(bundle, options);
-  const univer = new Univer({ locale: LocaleType.EN_US, locales: { [LocaleType.EN_US]: {} }, logLevel: LogLevel.SILENT });
+  const univer = new Univer({
+    locale: LocaleType.EN_US,
+    locales: { [LocaleType.EN_US]: {} },
+    logLevel: LogLevel.SILENT,
+  });
   univer.registerPlugin(UniverFormulaEnginePlugin, { function: host.functions });
   univer.registerPlugin(UniverSheetsPlugin);
   univer.registerPlugin(UniverSheetsFormulaPlugin, {

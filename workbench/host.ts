@@ -75,7 +75,12 @@ export function createHost(bundle: FunctionsBundle, options: { blankCells?: Blan
 
   function note(caller: BaseFunction, text: string | null): void {
     if (text === null && messages.size === 0) return;
-    const key = `${caller.unitId}/${caller.subUnitId}/${caller.row}/${caller.column}`;
+    const key = keyOf({
+      unitId: caller.unitId ?? '',
+      sheetId: caller.subUnitId ?? '',
+      row: caller.row,
+      column: caller.column,
+    });
     if (text !== null) messages.set(key, { run, text });
     else if ((messages.get(key)?.run ?? run) !== run) messages.delete(key);
   }
@@ -120,17 +125,23 @@ function compileCall(
   const required = parameters.filter((one) => one.optional !== true).length;
   return (values) => {
     if (values.length > parameters.length)
-      return fail('#VALUE!', `${metadata.name} takes at most ${parameters.length} arguments, ${values.length} were given.`);
+      return fail(
+        '#VALUE!',
+        `${metadata.name} takes at most ${parameters.length} arguments, ${values.length} were given.`,
+      );
     const plain: unknown[] = [];
     for (const [index, parameter] of parameters.entries()) {
       const value = values[index];
       if (value === undefined || (value.isNull() && !value.isArray())) {
-        if (index < required) return fail('#VALUE!', `${metadata.name} needs its argument "${parameter.name}".`);
+        if (index < required)
+          return fail('#VALUE!', `${metadata.name} needs its argument "${parameter.name}".`);
         plain.push(null);
         continue;
       }
       const argument =
-        parameter.dimensionality === 'matrix' ? matrixArgument(value, host.blankCells) : scalarArgument(value, parameter, host);
+        parameter.dimensionality === 'matrix'
+          ? matrixArgument(value, host.blankCells)
+          : scalarArgument(value, parameter, host);
       if (argument instanceof Refusal) return fail(argument.code, argument.message);
       plain.push(argument);
     }
@@ -138,7 +149,10 @@ function compileCall(
       return { value: toValueObject(body(...plain)), message: null };
     } catch (error) {
       const { code, message } = error as { code?: unknown; message?: unknown };
-      return fail(typeof code === 'string' ? code : '#VALUE!', typeof message === 'string' ? message : String(error));
+      return fail(
+        typeof code === 'string' ? code : '#VALUE!',
+        typeof message === 'string' ? message : String(error),
+      );
     }
   };
 }
@@ -183,20 +197,23 @@ function scalarArgument(value: BaseValueObject, parameter: ParameterMetadata, ho
   const plain = plainValue(one, host.blankCells);
   // What the host does before a function sees the value: text for a text parameter, a number for a number parameter.
   if (parameter.type === 'string') {
-    if (plain === null || one == null || one.isNull()) return '';
-    return typeof plain === 'boolean' ? String(plain).toUpperCase() : String(plain);
+    if (plain === null || !one || one.isNull()) return '';
+    return typeof plain === 'boolean' ? String(plain).toUpperCase() : `${plain as string | number}`;
   }
   if (parameter.type === 'number') {
     const number = plain === null || plain === '' ? 0 : Number(plain);
     return Number.isNaN(number)
-      ? new Refusal('#VALUE!', `The argument "${parameter.name}" takes a number, "${String(plain)}" was given.`)
+      ? new Refusal(
+          '#VALUE!',
+          `The argument "${parameter.name}" takes a number, "${plain as string}" was given.`,
+        )
       : number;
   }
   return plain;
 }
 
 function plainValue(value: BaseValueObject | null | undefined | void, blank: BlankCells): unknown {
-  if (value == null || value.isNull()) return blank === 'zero' ? 0 : null;
+  if (!value || value.isNull()) return blank === 'zero' ? 0 : null;
   if (value.isError()) {
     const code = (value as ErrorValueObject).getErrorType();
     return { type: 'Error', basicType: 'Error', basicValue: code };
@@ -210,11 +227,13 @@ function toValueObject(result: unknown): BaseValueObject {
     if (typeof result === 'number' && !Number.isFinite(result)) return ErrorValueObject.create(ErrorType.NUM);
     return cellValue(result);
   }
-  const rows = result.map((row) => (Array.isArray(row) ? row : [row]));
+  const rows = result.map((row: unknown): unknown[] => (Array.isArray(row) ? row : [row]));
   const columnCount = rows.reduce((most, row) => Math.max(most, row.length), 0);
   if (rows.length === 0 || columnCount === 0) return ErrorValueObject.create(ErrorType.CALC);
   return ArrayValueObject.create({
-    calculateValueList: rows.map((row) => Array.from({ length: columnCount }, (_, column) => cellValue(row[column]))),
+    calculateValueList: rows.map((row) =>
+      Array.from({ length: columnCount }, (_, column) => cellValue(row[column])),
+    ),
     rowCount: rows.length,
     columnCount,
     unitId: '',

@@ -29,7 +29,12 @@ async function openStart(book: Book): Promise<string> {
   const blank = new URLSearchParams(location.search).has('blank');
   const response = blank ? null : await fetch('covered-market.json');
   if (response === null || !response.ok) {
-    await book.open({ id: 'blank', name: UNTITLED, sheetOrder: ['s1'], sheets: { s1: { id: 's1', name: 'Sheet1' } } });
+    await book.open({
+      id: 'blank',
+      name: UNTITLED,
+      sheetOrder: ['s1'],
+      sheets: { s1: { id: 's1', name: 'Sheet1' } },
+    });
     return UNTITLED;
   }
   await book.open((await response.json()) as Parameters<Book['open']>[0]);

@@ -44,6 +44,11 @@ function stored(input: CellInput): ICellData {
   return { ...nothing, v: input, t: input.trim() !== '' && !Number.isNaN(Number(input)) ? 4 : 1 };
 }
 
+/** Work as a promise: what it throws becomes a rejection, as the port promises. */
+function later<T>(work: () => T): Promise<T> {
+  return new Promise((resolve) => resolve(work()));
+}
+
 export function createPort(book: Book, signals: Signals, theme: ThemeSwitch): WorkbookPort {
   const injector = book.univer.__getInjector();
 
@@ -143,7 +148,8 @@ export function createPort(book: Book, signals: Signals, theme: ThemeSwitch): Wo
     const facade = book.workbook.getSheetBySheetId(sheet.getSheetId());
     const rows = area.row + area.rows;
     const columns = area.column + area.columns;
-    if (rows > sheet.getRowCount()) facade?.insertRowsAfter(sheet.getRowCount() - 1, rows - sheet.getRowCount());
+    if (rows > sheet.getRowCount())
+      facade?.insertRowsAfter(sheet.getRowCount() - 1, rows - sheet.getRowCount());
     if (columns > sheet.getColumnCount())
       facade?.insertColumnsAfter(sheet.getColumnCount() - 1, columns - sheet.getColumnCount());
   }
@@ -193,68 +199,64 @@ export function createPort(book: Book, signals: Signals, theme: ThemeSwitch): Wo
     host: 'workbench',
     can: (ability) => ABILITIES.has(ability),
 
-    async selection() {
-      const selected = signals.selection();
-      return selected === null ? null : toSelection(selected);
-    },
+    selection: () =>
+      later(() => {
+        const selected = signals.selection();
+        return selected === null ? null : toSelection(selected);
+      }),
     onSelection: (listener) => signals.onSelection((selected) => listener(toSelection(selected))),
     onChange: (listener) => signals.onChange(() => listener({ area: null })),
-    async select(area) {
-      const facade = book.workbook.getSheetBySheetId(sheetOf(area).getSheetId());
-      facade?.activate();
-      rangeOf(area).activate();
-    },
+    select: (area) =>
+      later(() => {
+        book.workbook.getSheetBySheetId(sheetOf(area).getSheetId())?.activate();
+        rangeOf(area).activate();
+      }),
 
-    async read(areas) {
-      return areas.map(readBlock);
-    },
-    async sheetNames() {
-      return book.sheets().map((sheet) => sheet.getName());
-    },
-    async used(sheet) {
-      return usedArea(sheet);
-    },
-    async name(name, sheet) {
-      return nameMeaning(name, sheet);
-    },
+    read: (areas) => later(() => areas.map(readBlock)),
+    sheetNames: () => later(() => book.sheets().map((sheet) => sheet.getName())),
+    used: (sheet) => later(() => usedArea(sheet)),
+    name: (name, sheet) => later(() => nameMeaning(name, sheet)),
     // Tables of an opened file become plain cells, and formulas that named them hold their addresses (xlsx/tables.ts).
-    async table() {
-      return null;
-    },
-    async spill(cell) {
-      const sheet = book.sheet(cell.sheet);
-      const range = sheet === null ? null : book.spillOf(sheet, cell.row, cell.column);
-      return range === null ? null : areaOf(cell.sheet, range);
-    },
+    table: () => Promise.resolve(null),
+    spill: (cell) =>
+      later(() => {
+        const sheet = book.sheet(cell.sheet);
+        const range = sheet === null ? null : book.spillOf(sheet, cell.row, cell.column);
+        return range === null ? null : areaOf(cell.sheet, range);
+      }),
 
-    async occupied(area) {
-      return filledCells(area).map(shortAddress);
-    },
+    occupied: (area) => later(() => filledCells(area).map(shortAddress)),
     write,
     async insert(area) {
       const { row, column, rows, columns } = area;
-      const range = { startRow: row, endRow: row + rows - 1, startColumn: column, endColumn: column + columns - 1 };
-      await injector
-        .get(ICommandService)
-        .executeCommand(InsertRangeMoveDownCommand.id, { unitId: book.id, subUnitId: sheetOf(area).getSheetId(), range });
+      const range = {
+        startRow: row,
+        endRow: row + rows - 1,
+        startColumn: column,
+        endColumn: column + columns - 1,
+      };
+      await injector.get(ICommandService).executeCommand(InsertRangeMoveDownCommand.id, {
+        unitId: book.id,
+        subUnitId: sheetOf(area).getSheetId(),
+        range,
+      });
       await book.settle();
     },
 
-    async separators() {
-      return { decimal: '.', group: ',', list: ',' };
-    },
+    separators: () => Promise.resolve({ decimal: '.', group: ',', list: ',' }),
     theme: themeNow,
     onTheme: (listener) => theme.onChange(() => listener(themeNow())),
     today: () => new Date().toLocaleDateString(),
 
-    async addSheet(name) {
-      const before = book.workbook.getActiveSheet();
-      const taken = new Set(book.sheets().map((sheet) => sheet.getName().toLowerCase()));
-      let free = name;
-      for (let number = 2; taken.has(free.toLowerCase()); number++) free = `${name} ${number}`;
-      book.workbook.insertSheet(free);
-      book.workbook.setActiveSheet(before);
-      return free;
-    },
+    addSheet: (name) =>
+      later(() => {
+        const before = book.workbook.getActiveSheet();
+        const taken = new Set(book.sheets().map((sheet) => sheet.getName().toLowerCase()));
+        let free = name;
+        for (let number = 2; taken.has(free.toLowerCase()); number++) free = `${name} ${number}`;
+        book.workbook.insertSheet(free);
+        book.workbook.setActiveSheet(before);
+        return free;
+      }),
   };
 }

@@ -11,5 +11,5 @@ export async function mountSidePane(
   theme: ThemeSwitch,
 ): Promise<void> {
   const { mountPane } = await import(/* webpackChunkName: "pane" */ '../taskpane/pane');
-  await mountPane(container, createPort(book, signals, theme));
+  mountPane(container, createPort(book, signals, theme));
 }

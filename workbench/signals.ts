@@ -53,7 +53,10 @@ export function createSignals(book: Book): Signals {
     return {
       sheet: sheet.getName(),
       range,
-      active: { row: last.primary?.actualRow ?? range.startRow, column: last.primary?.actualColumn ?? range.startColumn },
+      active: {
+        row: last.primary?.actualRow ?? range.startRow,
+        column: last.primary?.actualColumn ?? range.startColumn,
+      },
     };
   }
 

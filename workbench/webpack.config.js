@@ -15,10 +15,12 @@ const root = path.resolve(__dirname, '..');
  * stays.
  */
 const hyphenation = new IgnorePlugin({
-  checkResource: (file, folder) => /engine-render[\\/]lib[\\/]es$/.test(folder) && /^\.\/(?!en-)[a-z]{2,5}(-[\w-]+)?-[\w-]{8}\.js$/.test(file),
+  checkResource: (file, folder) =>
+    /engine-render[\\/]lib[\\/]es$/.test(folder) &&
+    /^\.\/(?!en-)[a-z]{2,5}(-[\w-]+)?-[\w-]{8}\.js$/.test(file),
 });
 
-module.exports = (env = {}, argv = {}) => {
+module.exports = (_, argv = {}) => {
   const mode = argv.mode ?? 'production';
   const shared = {
     mode,
@@ -46,7 +48,12 @@ module.exports = (env = {}, argv = {}) => {
     cache: { ...shared.cache, name: 'workbench' },
     target: 'web',
     entry: { workbench: './workbench/index.ts' },
-    output: { path: path.join(root, 'dist/workbench'), filename: '[name].js', chunkFilename: '[name].js', clean: true },
+    output: {
+      path: path.join(root, 'dist/workbench'),
+      filename: '[name].js',
+      chunkFilename: '[name].js',
+      clean: true,
+    },
     module: {
       rules: [
         script,
@@ -69,7 +76,12 @@ module.exports = (env = {}, argv = {}) => {
     cache: { ...shared.cache, name: 'headless' },
     target: 'node20',
     entry: { headless: './workbench/headless.ts' },
-    output: { path: path.join(root, 'dist/node'), filename: '[name].js', library: { type: 'commonjs2' }, clean: true },
+    output: {
+      path: path.join(root, 'dist/node'),
+      filename: '[name].js',
+      library: { type: 'commonjs2' },
+      clean: true,
+    },
     // One readable file: it is run from the repository, never downloaded.
     optimization: { minimize: false, splitChunks: false },
     module: { rules: [script] },

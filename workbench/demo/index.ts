@@ -11,16 +11,37 @@ function readMe(): Paper {
   paper.height(0, 30);
   paper.put(1, 1, 'A demonstration with invented members, loads and names of halls.', 'note');
   const lines: readonly (readonly [string, string])[] = [
-    ['How it works', 'A beam is a few rows of cells; an answer is a formula that reads them. Change a straw-coloured cell and every result follows.'],
-    ['Try this', 'On "Canopy beam", change the snow from 6 to 12 and watch the limits used. Select a result to see its beam in the side pane.'],
-    ['Ask for more', 'In any empty cell: =SPANROW.DEFLECTION(beam rows, x). Typing =SPANROW. lists the functions with a word on each.'],
-    ['Fill down', '"Joist schedule" asks one template sixty times: one formula a column, filled down, with the values of each row.'],
-    ['When it is wrong', 'A row that is not understood gives an error with a sentence: hold the pointer over the cell, or read it in the line below.'],
-    ['Signs', 'Downward loads and deflections are positive; sagging moments are positive; reactions are positive when they push up.'],
-    ['Cautions', 'Linear elastic theory with small deflections, for review by a qualified engineer. Local codes and licensed practice decide limits, loads and combinations.'],
+    [
+      'How it works',
+      'A beam is a few rows of cells; an answer is a formula that reads them. Change a straw-coloured cell and every result follows.',
+    ],
+    [
+      'Try this',
+      'On "Canopy beam", change the snow from 6 to 12 and watch the limits used. Select a result to see its beam in the side pane.',
+    ],
+    [
+      'Ask for more',
+      'In any empty cell: =SPANROW.DEFLECTION(beam rows, x). Typing =SPANROW. lists the functions with a word on each.',
+    ],
+    [
+      'Fill down',
+      '"Joist schedule" asks one template sixty times: one formula a column, filled down, with the values of each row.',
+    ],
+    [
+      'When it is wrong',
+      'A row that is not understood gives an error with a sentence: hold the pointer over the cell, or read it in the line below.',
+    ],
+    [
+      'Signs',
+      'Downward loads and deflections are positive; sagging moments are positive; reactions are positive when they push up.',
+    ],
+    [
+      'Cautions',
+      'Linear elastic theory with small deflections, for review by a qualified engineer. Local codes and licensed practice decide limits, loads and combinations.',
+    ],
   ];
   lines.forEach(([head, words], index) => {
-    paper.put(3 + index, 1, head, 'plain');
+    paper.put(3 + index, 1, head, 'wrapped');
     paper.put(3 + index, 2, words, 'wrapped');
     paper.height(3 + index, 42);
   });

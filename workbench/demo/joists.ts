@@ -1,5 +1,5 @@
 /** Sixty floor joists from one template: the template's rows hold names, each joist brings its own values in its row of the schedule. */
-import { titleBlock, absolute } from './member';
+import { absolute, titleBlock, WIDTHS } from './member';
 import { Paper, type Put } from './paper';
 import { cellName } from '../xlsx/address';
 
@@ -27,14 +27,24 @@ const FIRST_ROW = 5; // of the template's header
 export const templateReference = `'${TEMPLATE_SHEET}'!${absolute(FIRST_ROW, 1, FIRST_ROW + TEMPLATE_ROWS.length, 8)}`;
 
 export function templateSheet(): Paper {
-  const paper = new Paper('joist-template', TEMPLATE_SHEET, [18, 128, 96, 92, 104, 92, 96, 96, 330]);
-  titleBlock(paper, 'Template of the floor joists', 'J-00', 'One set of rows for every joist of the schedule. The names get their values there.');
+  const paper = new Paper('joist-template', TEMPLATE_SHEET, WIDTHS);
+  titleBlock(
+    paper,
+    'Template of the floor joists',
+    'J-00',
+    'One set of rows for every joist of the schedule. The names get their values there.',
+  );
   paper.line(4, 1, ['Beam rows', ...Array<Put>(7).fill(null)], 'section');
   paper.line(FIRST_ROW, 1, HEADER, 'head');
   TEMPLATE_ROWS.forEach((cells, index) => {
     HEADER.forEach((_, column) => {
       const value = cells[column] ?? null;
-      paper.put(FIRST_ROW + 1 + index, 1 + column, value, column >= 1 && column <= 5 && value !== null ? 'input' : column === 7 ? 'note' : 'plain');
+      paper.put(
+        FIRST_ROW + 1 + index,
+        1 + column,
+        value,
+        column >= 1 && column <= 5 && value !== null ? 'input' : column === 7 ? 'note' : 'plain',
+      );
     });
   });
   const after = FIRST_ROW + TEMPLATE_ROWS.length + 2;
@@ -93,7 +103,16 @@ export function joists(): Joist[] {
       mark: `J${String(index + 1).padStart(2, '0')}`,
       hall,
       section: section.words,
-      values: [span, index % 5 === 2 ? 0.45 : 0.4, index % 3 === 0 ? 1.1 : 0.9, live, 11, section.inertia, partition, Math.round(span * 4) / 10],
+      values: [
+        span,
+        index % 5 === 2 ? 0.45 : 0.4,
+        index % 3 === 0 ? 1.1 : 0.9,
+        live,
+        11,
+        section.inertia,
+        partition,
+        Math.round(span * 4) / 10,
+      ],
     };
   });
 }
@@ -105,13 +124,34 @@ export const NAMES_COLUMN = 4;
 export const RESULTS_COLUMN = NAMES_COLUMN + NAMES.length;
 
 export function scheduleSheet(): Paper {
-  const paper = new Paper('joist-schedule', SCHEDULE_SHEET, [18, 52, 76, 84, 48, 52, 52, 52, 48, 66, 48, 52, 84, 84, 72, 84, 78], { rows: SCHEDULE_HEADER_ROW + 1, columns: 0 });
-  titleBlock(paper, 'Schedule of floor joists', 'J-01', 'One formula a column, filled down. The beam is the template with the values of the row.');
+  const paper = new Paper(
+    'joist-schedule',
+    SCHEDULE_SHEET,
+    [18, 50, 70, 78, 46, 46, 52, 52, 44, 62, 44, 44, 64, 56, 56, 70, 78],
+    { rows: SCHEDULE_HEADER_ROW + 1, columns: 0 },
+  );
+  titleBlock(
+    paper,
+    'Schedule of floor joists',
+    'J-01',
+    'One formula a column, filled down. The beam is the template with the values of the row.',
+  );
   const header = SCHEDULE_HEADER_ROW;
   const first = header + 1;
   const last = header + JOISTS;
-  paper.line(header - 1, MARK, ['', '', '', 'm', 'm', 'kN/m²', 'kN/m²', 'GPa', 'cm4', 'kN', 'm', 'mm', 'mm', '', 'kN', ''], 'soft');
-  paper.line(header, MARK, ['Mark', 'Hall', 'Size', ...NAMES, 'Sag, G + Q', 'Sag, Q', 'Used', 'Reaction', 'Result'], 'head');
+  paper.line(
+    header - 1,
+    MARK,
+    ['', '', '', 'm', 'm', 'kN/m²', 'kN/m²', 'GPa', 'cm4', 'kN', 'm', 'mm', 'mm', '', 'kN', ''],
+    'soft',
+  );
+  paper.line(
+    header,
+    MARK,
+    ['Mark', 'Hall', 'Size', ...NAMES, 'Sag, G + Q', 'Sag, Q', 'Used', 'Reaction', 'Result'],
+    'head',
+  );
+  paper.height(header, 40);
   const names = absolute(header, NAMES_COLUMN, header, NAMES_COLUMN + NAMES.length - 1);
   joists().forEach((joist, index) => {
     const row = first + index;
@@ -122,10 +162,28 @@ export function scheduleSheet(): Paper {
     const used = cellName(row, RESULTS_COLUMN + 2);
     paper.line(row, MARK, [joist.mark, joist.hall, joist.section], 'plain');
     paper.line(row, NAMES_COLUMN, joist.values, 'input');
-    paper.put(row, RESULTS_COLUMN, `=SPANROW.MAXDEFLECTION(${TEMPLATE_NAME},"G + Q",${tail}`, 'result', '0.0');
-    paper.put(row, RESULTS_COLUMN + 1, `=SPANROW.MAXDEFLECTION(${TEMPLATE_NAME},"Q",${tail}`, 'result', '0.0');
+    paper.put(
+      row,
+      RESULTS_COLUMN,
+      `=SPANROW.MAXDEFLECTION(${TEMPLATE_NAME},"G + Q",${tail}`,
+      'result',
+      '0.0',
+    );
+    paper.put(
+      row,
+      RESULTS_COLUMN + 1,
+      `=SPANROW.MAXDEFLECTION(${TEMPLATE_NAME},"Q",${tail}`,
+      'result',
+      '0.0',
+    );
     paper.put(row, RESULTS_COLUMN + 2, `=SPANROW.USED(${TEMPLATE_NAME},,,${tail}`, 'result', '0%');
-    paper.put(row, RESULTS_COLUMN + 3, `=SPANROW.REACTION(${TEMPLATE_NAME},0,"force","G + Q",${tail}`, 'result', '0.00');
+    paper.put(
+      row,
+      RESULTS_COLUMN + 3,
+      `=SPANROW.REACTION(${TEMPLATE_NAME},0,"force","G + Q",${tail}`,
+      'result',
+      '0.00',
+    );
     paper.put(row, RESULTS_COLUMN + 4, `=IF(${used}<=1,"within","exceeded")`, 'plain');
   });
   const used = absolute(first, RESULTS_COLUMN + 2, last, RESULTS_COLUMN + 2);

@@ -25,24 +25,32 @@ export interface Member {
   readonly rows: readonly BeamRow[];
   readonly results: readonly ResultLine[];
   /** formulas that spill, each under its own heading, one below the other with room for the lines they fill */
-  readonly tables: readonly { readonly heading: string; readonly formula: string; readonly lines: number; readonly pattern?: string }[];
+  readonly tables: readonly {
+    readonly heading: string;
+    readonly formula: string;
+    readonly lines: number;
+    readonly pattern?: string;
+    readonly head?: boolean;
+  }[];
   readonly notes: readonly string[];
 }
 
 const HEADER = ['Item', 'At', 'To', 'Value', 'End value', 'Unit', 'Case', 'Note'];
 const FIRST = 1; // column B: a narrow margin stands before it
-const WIDTHS = [18, 128, 96, 92, 104, 92, 96, 96, 330];
+export const WIDTHS = [18, 132, 84, 74, 90, 80, 80, 84, 250];
 const NOTE_COLUMN = FIRST + 7;
 
 export function titleBlock(paper: Paper, title: string, mark: string, about: string): void {
   paper.put(0, FIRST, title, 'title');
   paper.height(0, 30);
-  paper.put(1, FIRST, 'Covered market, member calculations', 'soft');
-  paper.put(1, FIRST + 4, `Sheet ${mark}`, 'soft');
-  paper.put(1, FIRST + 5, 'Revision A', 'soft');
-  paper.put(1, FIRST + 6, 'Prepared', 'soft');
-  paper.put(1, NOTE_COLUMN, 'Checked', 'soft');
+  paper.put(
+    1,
+    FIRST,
+    `Covered market, member calculations   ·   sheet ${mark}   ·   revision A   ·   prepared            ·   checked            `,
+    'soft',
+  );
   paper.put(2, FIRST, about, 'note');
+  paper.height(2, 28);
 }
 
 export function memberSheet(member: Member): Paper {
@@ -82,7 +90,10 @@ export function memberSheet(member: Member): Paper {
   }
   const beam = absolute(firstRow, FIRST, row - 1, NOTE_COLUMN);
   const place = (formula: string) =>
-    formula.replace(/\{beam\}/g, beam).replace(/\{names\}/g, names).replace(/\{values\}/g, values);
+    formula
+      .replace(/\{beam\}/g, beam)
+      .replace(/\{names\}/g, names)
+      .replace(/\{values\}/g, values);
 
   row += 1;
   section(paper, row, 'Results');
@@ -94,14 +105,19 @@ export function memberSheet(member: Member): Paper {
     if (note !== undefined) paper.put(row, FIRST + 5, note, 'note');
     row += 1;
   }
-  for (const { heading, formula, lines, pattern } of member.tables) {
+  for (const { heading, formula, lines, pattern, head = true } of member.tables) {
     row += 1;
     section(paper, row, heading);
     row += 1;
-    paper.put(row, FIRST, place(formula), 'plain');
+    if (head) {
+      paper.line(row, FIRST, Array<Put>(HEADER.length).fill(null), 'head');
+      paper.height(row, 40);
+    }
+    paper.put(row, FIRST, place(formula), head ? 'head' : 'plain');
     // number formats for the cells that the formula will spill into
     for (let line = 1; line < lines; line++)
-      for (let column = 0; column < HEADER.length; column++) paper.put(row + line, FIRST + column, null, 'plain', pattern);
+      for (let column = 0; column < HEADER.length; column++)
+        paper.put(row + line, FIRST + column, null, 'plain', pattern);
     row += lines;
   }
   row += 1;

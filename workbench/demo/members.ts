@@ -1,7 +1,8 @@
 /** The members of an invented covered market. Sections are ordinary sizes given as plain numbers; loads are of the usual order. */
 import type { Member } from './member';
 
-const CAUTION = 'Linear elastic, small deflections. Limits, loads and combinations are for the engineer and the governing code to decide.';
+const CAUTION =
+  'Linear elastic, small deflections. Limits, loads and combinations are for the engineer and the governing code to decide.';
 
 export const canopy: Member = {
   id: 'canopy',
@@ -23,13 +24,52 @@ export const canopy: Member = {
     ['limit', null, null, 'span/250', null, null, 'G + S', 'sag of the finished roof'],
   ],
   results: [
-    { label: 'Deflection at the sign board (x = 3.6 m), G + S', formula: '=SPANROW.DEFLECTION({beam},3.6,"G + S")', unit: 'mm', pattern: '0.0' },
-    { label: 'Largest deflection, G + S', formula: '=SPANROW.MAXDEFLECTION({beam},"G + S")', unit: 'mm', pattern: '0.0' },
-    { label: 'where', formula: '=SPANROW.PEAK({beam},"deflection","largest","position","G + S")', unit: 'm', pattern: '0.00' },
-    { label: 'Largest lift, G + W', formula: '=SPANROW.PEAK({beam},"deflection","lowest","value","G + W")', unit: 'mm', pattern: '0.0', note: 'negative: upward' },
-    { label: 'Largest moment, 1.35 G + 1.5 S', formula: '=SPANROW.PEAK({beam},"moment","highest","value","1.35 G + 1.5 S")', unit: 'kN·m', pattern: '0.0' },
-    { label: 'Limits used', formula: '=SPANROW.USED({beam})', unit: '', pattern: '0%', note: 'worst of the limit rows' },
-    { label: 'I that would just do', formula: '=SPANROW.REQUIREDI({beam})', unit: 'cm4', pattern: '#,##0', note: 'for the next size down' },
+    {
+      label: 'Deflection at the sign board, G + S',
+      formula: '=SPANROW.DEFLECTION({beam},3.6,"G + S")',
+      unit: 'mm',
+      pattern: '0.0',
+      note: 'at x = 3.6 m',
+    },
+    {
+      label: 'Largest deflection, G + S',
+      formula: '=SPANROW.MAXDEFLECTION({beam},"G + S")',
+      unit: 'mm',
+      pattern: '0.0',
+    },
+    {
+      label: 'where',
+      formula: '=SPANROW.PEAK({beam},"deflection","largest","position","G + S")',
+      unit: 'm',
+      pattern: '0.00',
+    },
+    {
+      label: 'Largest lift, G + W',
+      formula: '=SPANROW.PEAK({beam},"deflection","lowest","value","G + W")',
+      unit: 'mm',
+      pattern: '0.0',
+      note: 'negative: upward',
+    },
+    {
+      label: 'Largest moment, 1.35 G + 1.5 S',
+      formula: '=SPANROW.PEAK({beam},"moment","highest","value","1.35 G + 1.5 S")',
+      unit: 'kN·m',
+      pattern: '0.0',
+    },
+    {
+      label: 'Limits used',
+      formula: '=SPANROW.USED({beam})',
+      unit: '',
+      pattern: '0%',
+      note: 'worst of the limit rows',
+    },
+    {
+      label: 'I that would just do',
+      formula: '=SPANROW.REQUIREDI({beam})',
+      unit: 'cm4',
+      pattern: '#,##0',
+      note: 'for the next size down',
+    },
   ],
   tables: [
     { heading: 'Check of the limits', formula: '=SPANROW.CHECK({beam})', lines: 4, pattern: '0.00' },
@@ -57,17 +97,49 @@ export const purlin: Member = {
     ['limit', null, null, 'span/250', null, null, 'G + S', 'full snow'],
   ],
   results: [
-    { label: 'Largest deflection, G + S', formula: '=SPANROW.MAXDEFLECTION({beam},"G + S")', unit: 'mm', pattern: '0.0' },
-    { label: 'where', formula: '=SPANROW.PEAK({beam},"deflection","largest","position","G + S")', unit: 'm', pattern: '0.00' },
-    { label: 'Middle of the middle bay (x = 7.75 m), G + S', formula: '=SPANROW.DEFLECTION({beam},7.75,"G + S")', unit: 'mm', pattern: '0.0' },
-    { label: 'Hogging moment over frame 2, G + S', formula: '=SPANROW.MOMENT({beam},5,"G + S")', unit: 'kN·m', pattern: '0.00', note: 'negative: hogging' },
-    { label: 'Reaction at frame 2, G + S', formula: '=SPANROW.REACTION({beam},5,"force","G + S")', unit: 'kN', pattern: '0.0' },
+    {
+      label: 'Largest deflection, G + S',
+      formula: '=SPANROW.MAXDEFLECTION({beam},"G + S")',
+      unit: 'mm',
+      pattern: '0.0',
+    },
+    {
+      label: 'where',
+      formula: '=SPANROW.PEAK({beam},"deflection","largest","position","G + S")',
+      unit: 'm',
+      pattern: '0.00',
+    },
+    {
+      label: 'Middle of the middle bay, G + S',
+      formula: '=SPANROW.DEFLECTION({beam},7.75,"G + S")',
+      unit: 'mm',
+      pattern: '0.0',
+      note: 'at x = 7.75 m',
+    },
+    {
+      label: 'Hogging moment over frame 2, G + S',
+      formula: '=SPANROW.MOMENT({beam},5,"G + S")',
+      unit: 'kN·m',
+      pattern: '0.00',
+      note: 'negative: hogging',
+    },
+    {
+      label: 'Reaction at frame 2, G + S',
+      formula: '=SPANROW.REACTION({beam},5,"force","G + S")',
+      unit: 'kN',
+      pattern: '0.0',
+    },
     { label: 'Limits used', formula: '=SPANROW.USED({beam})', unit: '', pattern: '0%' },
   ],
   tables: [
     { heading: 'Check of the limits', formula: '=SPANROW.CHECK({beam})', lines: 5, pattern: '0.00' },
     { heading: 'Reactions, G + S', formula: '=SPANROW.REACTIONS({beam},"G + S")', lines: 6, pattern: '0.00' },
-    { heading: 'Deflection with snow on any bays: lowest and highest', formula: '=SPANROW.ENVELOPE({beam},"deflection","G + S","S",4)', lines: 40, pattern: '0.00' },
+    {
+      heading: 'Deflection with snow on any bays: lowest and highest',
+      formula: '=SPANROW.ENVELOPE({beam},"deflection","G + S","S",4)',
+      lines: 18,
+      pattern: '0.00',
+    },
   ],
   notes: [CAUTION, 'The last table lets the snow (case S) lie only where it makes things worse, bay by bay.'],
 };
@@ -77,7 +149,8 @@ export const bracket: Member = {
   sheet: 'Tapered bracket',
   title: 'Tapered bracket of the side awning',
   mark: 'B-01',
-  about: 'Plated steel cantilever, full depth at the column, half the depth at the tip. I falls with the cube of the depth.',
+  about:
+    'Plated steel cantilever, full depth at the column, half the depth at the tip. I falls with the cube of the depth.',
   given: [
     ['L', 2.4, 'm', 'length from the column face'],
     ['I0', 3200, 'cm4', 'second moment of area at the column'],
@@ -93,16 +166,50 @@ export const bracket: Member = {
     ['limit', null, null, 'span/180', null, null, 'G + Q', 'cantilever: twice its length counts'],
   ],
   results: [
-    { label: 'Deflection of the tip, G + Q', formula: '=SPANROW.MAXDEFLECTION({beam},"G + Q",{names},{values})', unit: 'mm', pattern: '0.0' },
-    { label: 'Slope of the tip, G + Q', formula: '=SPANROW.SLOPE({beam},$C$6,"G + Q",{names},{values})*1000', unit: 'mrad', pattern: '0.00' },
-    { label: 'Fixing moment, G + Q', formula: '=SPANROW.MOMENT({beam},0,"G + Q",{names},{values})', unit: 'kN·m', pattern: '0.0', note: 'negative: hogging' },
-    { label: 'Limit used', formula: '=SPANROW.USED({beam},,"G + Q",{names},{values})', unit: '', pattern: '0%' },
-    { label: 'Stiffness that would just do, as a factor', formula: '=SPANROW.STIFFNESSFACTOR({beam},,"G + Q",{names},{values})', unit: '', pattern: '0.00' },
+    {
+      label: 'Deflection of the tip, G + Q',
+      formula: '=SPANROW.MAXDEFLECTION({beam},"G + Q",{names},{values})',
+      unit: 'mm',
+      pattern: '0.0',
+    },
+    {
+      label: 'Slope of the tip, G + Q',
+      formula: '=SPANROW.SLOPE({beam},$C$6,"G + Q",{names},{values})*1000',
+      unit: 'mrad',
+      pattern: '0.00',
+    },
+    {
+      label: 'Fixing moment, G + Q',
+      formula: '=SPANROW.MOMENT({beam},0,"G + Q",{names},{values})',
+      unit: 'kN·m',
+      pattern: '0.0',
+      note: 'negative: hogging',
+    },
+    {
+      label: 'Limit used',
+      formula: '=SPANROW.USED({beam},,"G + Q",{names},{values})',
+      unit: '',
+      pattern: '0%',
+    },
+    {
+      label: 'Stiffness factor that would just do',
+      formula: '=SPANROW.STIFFNESSFACTOR({beam},,"G + Q",{names},{values})',
+      unit: '',
+      pattern: '0.00',
+    },
   ],
   tables: [
-    { heading: 'Deflected shape in fifths', formula: '=SPANROW.PROFILE({beam},6,"G + Q",{names},{values})', lines: 9, pattern: '0.0000' },
+    {
+      heading: 'Deflected shape in fifths',
+      formula: '=SPANROW.PROFILE({beam},6,"G + Q",{names},{values})',
+      lines: 9,
+      pattern: '0.0000',
+    },
   ],
-  notes: [CAUTION, 'The names at the top stand in the rows as text: change L, and the supports, loads and taper follow.'],
+  notes: [
+    CAUTION,
+    'The names at the top stand in the rows as text: change L, and the supports, loads and taper follow.',
+  ],
 };
 
 export const gallery: Member = {
@@ -110,7 +217,8 @@ export const gallery: Member = {
   sheet: 'Gallery',
   title: 'Gallery beam with overhang',
   mark: 'G-01',
-  about: 'Glued laminated timber 140 x 420 mm, span 6.4 m, overhang 1.8 m to the balustrade. Shear deformation included.',
+  about:
+    'Glued laminated timber 140 x 420 mm, span 6.4 m, overhang 1.8 m to the balustrade. Shear deformation included.',
   rows: [
     ['units', 'kN', 'm', 'mm'],
     ['pin', 0, null, null, null, null, null, 'wall'],
@@ -127,18 +235,61 @@ export const gallery: Member = {
     ['limit', null, null, 'span/200', null, null, '1.6 G + Qs', 'with creep of 0.6 on the permanent load'],
   ],
   results: [
-    { label: 'Span, largest sag, G + Qs', formula: '=SPANROW.PEAK({beam},"deflection","highest","value","G + Qs")', unit: 'mm', pattern: '0.0' },
-    { label: 'The same with creep, 1.6 G + Qs', formula: '=SPANROW.PEAK({beam},"deflection","highest","value","1.6 G + Qs")', unit: 'mm', pattern: '0.0' },
-    { label: 'Tip of the overhang, G + Qo', formula: '=SPANROW.DEFLECTION({beam},8.2,"G + Qo")', unit: 'mm', pattern: '0.0', note: 'negative: upward' },
-    { label: 'Tip of the overhang, G + Qs', formula: '=SPANROW.DEFLECTION({beam},8.2,"G + Qs")', unit: 'mm', pattern: '0.0' },
-    { label: 'Reaction at the post, G + Qs + Qo', formula: '=SPANROW.REACTION({beam},6.4,"force","G + Qs + Qo")', unit: 'kN', pattern: '0.0' },
-    { label: 'Hogging over the post, G + Qs + Qo', formula: '=SPANROW.PEAK({beam},"moment","lowest","value","G + Qs + Qo")', unit: 'kN·m', pattern: '0.0' },
-    { label: 'Fundamental frequency, G', formula: '=SPANROW.FREQUENCY({beam},"G")', unit: 'Hz', pattern: '0.0', note: "Rayleigh's method, permanent load as mass" },
-    { label: 'Limits used', formula: '=SPANROW.USED({beam})', unit: '', pattern: '0%', note: 'worst of the limit rows' },
+    {
+      label: 'Span, largest sag, G + Qs',
+      formula: '=SPANROW.PEAK({beam},"deflection","highest","value","G + Qs")',
+      unit: 'mm',
+      pattern: '0.0',
+    },
+    {
+      label: 'The same with creep, 1.6 G + Qs',
+      formula: '=SPANROW.PEAK({beam},"deflection","highest","value","1.6 G + Qs")',
+      unit: 'mm',
+      pattern: '0.0',
+    },
+    {
+      label: 'Tip of the overhang, G + Qo',
+      formula: '=SPANROW.DEFLECTION({beam},8.2,"G + Qo")',
+      unit: 'mm',
+      pattern: '0.0',
+    },
+    {
+      label: 'Tip of the overhang, G + Qs',
+      formula: '=SPANROW.DEFLECTION({beam},8.2,"G + Qs")',
+      unit: 'mm',
+      pattern: '0.0',
+      note: 'negative: upward',
+    },
+    {
+      label: 'Reaction at the post, G + Qs + Qo',
+      formula: '=SPANROW.REACTION({beam},6.4,"force","G + Qs + Qo")',
+      unit: 'kN',
+      pattern: '0.0',
+    },
+    {
+      label: 'Hogging over the post, G + Qs + Qo',
+      formula: '=SPANROW.PEAK({beam},"moment","lowest","value","G + Qs + Qo")',
+      unit: 'kN·m',
+      pattern: '0.0',
+    },
+    {
+      label: 'Fundamental frequency, G',
+      formula: '=SPANROW.FREQUENCY({beam},"G")',
+      unit: 'Hz',
+      pattern: '0.0',
+      note: "Rayleigh's method, permanent load as mass",
+    },
+    {
+      label: 'Limits used',
+      formula: '=SPANROW.USED({beam})',
+      unit: '',
+      pattern: '0%',
+      note: 'worst of the limit rows',
+    },
   ],
   tables: [
     { heading: 'Check of the limits', formula: '=SPANROW.CHECK({beam})', lines: 8, pattern: '0.00' },
-    { heading: 'How the rows were read', formula: '=SPANROW.READBACK({beam})', lines: 18 },
+    { heading: 'How the rows were read', formula: '=SPANROW.READBACK({beam})', lines: 24, head: false },
   ],
   notes: [CAUTION],
 };
@@ -162,9 +313,24 @@ export const dock: Member = {
     ['limit', null, null, 'span/240', null, null, 'D + L'],
   ],
   results: [
-    { label: 'Largest deflection, D + L', formula: '=SPANROW.MAXDEFLECTION({beam},"D + L")', unit: 'in', pattern: '0.00' },
-    { label: 'Largest deflection, L', formula: '=SPANROW.MAXDEFLECTION({beam},"L")', unit: 'in', pattern: '0.00' },
-    { label: 'Largest moment, 1.2 D + 1.6 L', formula: '=SPANROW.PEAK({beam},"moment","highest","value","1.2 D + 1.6 L")', unit: 'kip·ft', pattern: '0' },
+    {
+      label: 'Largest deflection, D + L',
+      formula: '=SPANROW.MAXDEFLECTION({beam},"D + L")',
+      unit: 'in',
+      pattern: '0.00',
+    },
+    {
+      label: 'Largest deflection, L',
+      formula: '=SPANROW.MAXDEFLECTION({beam},"L")',
+      unit: 'in',
+      pattern: '0.00',
+    },
+    {
+      label: 'Largest moment, 1.2 D + 1.6 L',
+      formula: '=SPANROW.PEAK({beam},"moment","highest","value","1.2 D + 1.6 L")',
+      unit: 'kip·ft',
+      pattern: '0',
+    },
     { label: 'Limits used', formula: '=SPANROW.USED({beam})', unit: '', pattern: '0%' },
   ],
   tables: [

@@ -49,7 +49,13 @@ export class Paper {
   }
 
   /** Puts a row of values from a column on. */
-  line(row: number, column: number, values: readonly Put[], format: Format = 'plain', pattern?: string): void {
+  line(
+    row: number,
+    column: number,
+    values: readonly Put[],
+    format: Format = 'plain',
+    pattern?: string,
+  ): void {
     values.forEach((value, index) => this.put(row, column + index, value, format, pattern));
   }
 

@@ -46,7 +46,8 @@ export function callsSpanrow(formula: string): boolean {
 export function otherAddIns(formula: string): string[] {
   const found: string[] = [];
   outsideQuotes(formula, (part) => {
-    for (const [, name] of part.matchAll(ADD_IN)) if (name !== undefined && !/^SPANROW_/i.test(name)) found.push(name);
+    for (const [, name] of part.matchAll(ADD_IN))
+      if (name !== undefined && !/^SPANROW_/i.test(name)) found.push(name);
     return part;
   });
   return found;

@@ -38,7 +38,8 @@ export function readLayout(part: Uint8Array | undefined): SheetLayout {
         const index = Number(attributes.r) - 1;
         const height = Number(attributes.ht);
         const own: IRowData = {};
-        if (attributes.customHeight === '1' && height > 0 && height < 1000) own.h = Math.round(height * PIXELS_PER_POINT);
+        if (attributes.customHeight === '1' && height > 0 && height < 1000)
+          own.h = Math.round(height * PIXELS_PER_POINT);
         if (attributes.hidden === '1') own.hd = 1;
         if (index >= 0 && Object.keys(own).length > 0) rows[index] = own;
         break;
@@ -61,7 +62,12 @@ export function readLayout(part: Uint8Array | undefined): SheetLayout {
         const xSplit = Math.max(0, Number(attributes.xSplit ?? 0)) || 0;
         const ySplit = Math.max(0, Number(attributes.ySplit ?? 0)) || 0;
         if (xSplit > 100 || ySplit > 100) break;
-        freeze = { xSplit, ySplit, startColumn: xSplit > 0 ? xSplit : -1, startRow: ySplit > 0 ? ySplit : -1 };
+        freeze = {
+          xSplit,
+          ySplit,
+          startColumn: xSplit > 0 ? xSplit : -1,
+          startRow: ySplit > 0 ? ySplit : -1,
+        };
         break;
       }
     }

@@ -22,21 +22,26 @@ const MOST_CELLS = 400_000;
 const MOST_SHEETS = 200;
 const MOST_MERGES = 20_000;
 /** Parts that are read. Pictures, macros and the like are never unpacked. */
-const WANTED = /^(\[Content_Types\]\.xml|_rels\/|docProps\/|xl\/(_rels\/|worksheets\/|tables\/|theme\/|[^/]+\.xml$))/i;
+const WANTED =
+  /^(\[Content_Types\]\.xml|_rels\/|docProps\/|xl\/(_rels\/|worksheets\/|tables\/|theme\/|[^/]+\.xml$))/i;
 
 export async function readXlsx(bytes: Uint8Array, name: string): Promise<ReadFile> {
   try {
     return await readOrThrow(bytes, name);
   } catch (error) {
     if (error instanceof FileProblem) return { ok: false, reason: error.message };
-    return { ok: false, reason: `it could not be read (${error instanceof Error ? error.message : String(error)}).` };
+    return {
+      ok: false,
+      reason: `it could not be read (${error instanceof Error ? error.message : String(error)}).`,
+    };
   }
 }
 
 async function readOrThrow(bytes: Uint8Array, name: string): Promise<ReadFile> {
   const names = zipNames(bytes);
   const parts = await unzip(bytes, (part) => WANTED.test(part));
-  if (!parts.has('xl/workbook.xml')) throw new FileProblem('it holds no workbook (xl/workbook.xml is missing).');
+  if (!parts.has('xl/workbook.xml'))
+    throw new FileProblem('it holds no workbook (xl/workbook.xml is missing).');
   // the cell reader gets parts that are already unpacked within limits, never the packed file
   const book = read(await zip(parts, { deflate: false }), {
     type: 'array',
@@ -54,15 +59,20 @@ async function readOrThrow(bytes: Uint8Array, name: string): Promise<ReadFile> {
   const { styles } = readStyles(decode(parts.get('xl/styles.xml')), decode(parts.get('xl/theme/theme1.xml')));
   const tables = readTables(book.SheetNames, places, parts);
   for (const table of tables)
-    notes.push(`Table "${table.name}" on sheet "${table.sheet}": its cells are kept, its frame is not; formulas hold its cells' addresses.`);
-  if (mixedTexts(parts.get('xl/sharedStrings.xml'))) notes.push('Mixed formatting inside texts (the texts are kept).');
+    notes.push(
+      `Table "${table.name}" on sheet "${table.sheet}": its cells are kept, its frame is not; formulas hold its cells' addresses.`,
+    );
+  if (mixedTexts(parts.get('xl/sharedStrings.xml')))
+    notes.push('Mixed formatting inside texts (the texts are kept).');
 
   const snapshot: IWorkbookData = {
     id: `book-${Date.now().toString(36)}`,
     name,
     appVersion: '',
     locale: 'enUS' as IWorkbookData['locale'],
-    styles: Object.fromEntries(styles.flatMap((style, index) => (style === null ? [] : [[`f${index}`, style]]))),
+    styles: Object.fromEntries(
+      styles.flatMap((style, index) => (style === null ? [] : [[`f${index}`, style]])),
+    ),
     sheetOrder: [],
     sheets: {},
   };
@@ -72,13 +82,24 @@ async function readOrThrow(bytes: Uint8Array, name: string): Promise<ReadFile> {
     const part = parts.get(places.get(sheetName) ?? '');
     const id = `sheet-${index + 1}`;
     snapshot.sheetOrder.push(id);
-    snapshot.sheets[id] = readSheet(id, sheetName, sheet, part, { book, index, styles, tables, tally, notes });
+    snapshot.sheets[id] = readSheet(id, sheetName, sheet, part, {
+      book,
+      index,
+      styles,
+      tables,
+      tally,
+      notes,
+    });
     notes.push(...sheetLeftOut(sheetName, part));
   });
   if (tally.arrays > 0)
-    notes.push(`${tally.arrays} array formula${tally.arrays === 1 ? '' : 's'} of the older kind ({=…}): kept as formulas that spill.`);
-  if (tally.unturned > 0) notes.push(`${tally.unturned} formulas name a table in a way that is not understood; they show #NAME?.`);
-  if (tally.addIns.size > 0) notes.push(`Functions of other add-ins, which show #NAME? here: ${[...tally.addIns].join(', ')}.`);
+    notes.push(
+      `${tally.arrays} array formula${tally.arrays === 1 ? '' : 's'} of the older kind ({=…}): kept as formulas that spill.`,
+    );
+  if (tally.unturned > 0)
+    notes.push(`${tally.unturned} formulas name a table in a way that is not understood; they show #NAME?.`);
+  if (tally.addIns.size > 0)
+    notes.push(`Functions of other add-ins, which show #NAME? here: ${[...tally.addIns].join(', ')}.`);
   const defined = readNames(book, snapshot, tables, notes);
   snapshot.resources = [{ name: 'SHEET_DEFINED_NAME_PLUGIN', data: JSON.stringify(defined) }];
   return { ok: true, snapshot, notes };
@@ -93,7 +114,13 @@ interface Context {
   readonly notes: string[];
 }
 
-function readSheet(id: string, name: string, sheet: WorkSheet | undefined, part: Uint8Array | undefined, context: Context): Partial<IWorksheetData> {
+function readSheet(
+  id: string,
+  name: string,
+  sheet: WorkSheet | undefined,
+  part: Uint8Array | undefined,
+  context: Context,
+): Partial<IWorksheetData> {
   const layout = readLayout(part);
   const cellData: Record<number, Record<number, ICellData>> = {};
   let [lastRow, lastColumn] = [0, 0];
@@ -109,12 +136,14 @@ function readSheet(id: string, name: string, sheet: WorkSheet | undefined, part:
     const at = parseRange(address);
     if (at === null) continue;
     context.tally.cells += 1;
-    if (context.tally.cells > MOST_CELLS) throw new FileProblem(`it has more than ${MOST_CELLS.toLocaleString('en')} filled cells.`);
+    if (context.tally.cells > MOST_CELLS)
+      throw new FileProblem(`it has more than ${MOST_CELLS.toLocaleString('en')} filled cells.`);
     const data = readCell(cell as CellObject, name, at.startRow, at.startColumn, context);
     if (data !== null) put(at.startRow, at.startColumn, data);
   }
   const mergeData = readMerges(sheet, name, context.notes);
-  for (const { endRow, endColumn } of mergeData) [lastRow, lastColumn] = [Math.max(lastRow, endRow), Math.max(lastColumn, endColumn)];
+  for (const { endRow, endColumn } of mergeData)
+    [lastRow, lastColumn] = [Math.max(lastRow, endRow), Math.max(lastColumn, endColumn)];
   return {
     id,
     name,
@@ -130,7 +159,13 @@ function readSheet(id: string, name: string, sheet: WorkSheet | undefined, part:
   };
 }
 
-function readCell(cell: CellObject, sheet: string, row: number, column: number, context: Context): ICellData | null {
+function readCell(
+  cell: CellObject,
+  sheet: string,
+  row: number,
+  column: number,
+  context: Context,
+): ICellData | null {
   const value = storedValue(cell);
   const range = cell.F === undefined ? null : parseRange(cell.F);
   const origin = range === null || (range.startRow === row && range.startColumn === column);
@@ -152,7 +187,8 @@ function storedValue(cell: CellObject): ICellData | null {
       return { v: cell.v === true ? 1 : 0, t: 3 };
     case 's':
     case 'e': {
-      const text = cell.t === 'e' ? (ERROR_TEXT[Number(cell.v)] ?? cell.w ?? '#VALUE!') : String(cell.v ?? '');
+      const text =
+        cell.t === 'e' ? (ERROR_TEXT[Number(cell.v)] ?? cell.w ?? '#VALUE!') : String(cell.v ?? '');
       // text that looks like a number stays text
       return { v: text, t: cell.t === 's' && text.trim() !== '' && !Number.isNaN(Number(text)) ? 4 : 1 };
     }
@@ -171,7 +207,10 @@ function readMerges(sheet: WorkSheet | undefined, name: string, notes: string[])
     .slice(0, MOST_MERGES)
     .map(({ s, e }) => ({ startRow: s.r, startColumn: s.c, endRow: e.r, endColumn: e.c }))
     .filter((one) => (one.endRow - one.startRow + 1) * (one.endColumn - one.startColumn + 1) <= 100_000);
-  if (kept.length < merges.length) notes.push(`Sheet "${name}": ${merges.length - kept.length} merged areas that are too large or too many.`);
+  if (kept.length < merges.length)
+    notes.push(
+      `Sheet "${name}": ${merges.length - kept.length} merged areas that are too large or too many.`,
+    );
   return kept;
 }
 
@@ -180,14 +219,16 @@ function sheetParts(parts: ReadonlyMap<string, Uint8Array>): Map<string, string>
   const targets = relationTargets(parts.get('xl/_rels/workbook.xml.rels'), 'xl/');
   const places = new Map<string, string>();
   for (const { name, attributes } of tags(decode(parts.get('xl/workbook.xml'))))
-    if (name === 'sheet' && attributes.name !== undefined) places.set(attributes.name, targets.get(attributes.id ?? '') ?? '');
+    if (name === 'sheet' && attributes.name !== undefined)
+      places.set(attributes.name, targets.get(attributes.id ?? '') ?? '');
   return places;
 }
 
 function relationTargets(part: Uint8Array | undefined, folder: string): Map<string, string> {
   const targets = new Map<string, string>();
   for (const { name, attributes } of tags(decode(part)))
-    if (name === 'Relationship') targets.set(attributes.Id ?? '', resolvePath(folder, attributes.Target ?? ''));
+    if (name === 'Relationship')
+      targets.set(attributes.Id ?? '', resolvePath(folder, attributes.Target ?? ''));
   return targets;
 }
 
@@ -202,7 +243,11 @@ function resolvePath(folder: string, target: string): string {
   return path.join('/');
 }
 
-function readTables(sheets: readonly string[], places: ReadonlyMap<string, string>, parts: ReadonlyMap<string, Uint8Array>): FileTable[] {
+function readTables(
+  sheets: readonly string[],
+  places: ReadonlyMap<string, string>,
+  parts: ReadonlyMap<string, Uint8Array>,
+): FileTable[] {
   const found: FileTable[] = [];
   for (const sheet of sheets) {
     const place = places.get(sheet) ?? '';
@@ -217,7 +262,12 @@ function readTables(sheets: readonly string[], places: ReadonlyMap<string, strin
   return found;
 }
 
-function readNames(book: WorkBook, snapshot: IWorkbookData, tables: readonly FileTable[], notes: string[]): Record<string, unknown> {
+function readNames(
+  book: WorkBook,
+  snapshot: IWorkbookData,
+  tables: readonly FileTable[],
+  notes: string[],
+): Record<string, unknown> {
   const defined: Record<string, unknown> = {};
   (book.Workbook?.Names ?? []).forEach(({ Name, Ref, Sheet }, index) => {
     if (Name.startsWith('_xlnm.')) {

@@ -40,9 +40,19 @@ export function readStyles(stylesXml: string, themeXml: string): FileStyles {
   let edge: keyof IBorderData | null = null;
   let format: { attributes: Tag['attributes']; alignment: Tag['attributes'] | null } | null = null;
 
-  const SECTIONS = new Set(['numFmts', 'fonts', 'fills', 'borders', 'cellStyleXfs', 'cellXfs', 'cellStyles', 'dxfs']);
+  const SECTIONS = new Set([
+    'numFmts',
+    'fonts',
+    'fills',
+    'borders',
+    'cellStyleXfs',
+    'cellXfs',
+    'cellStyles',
+    'dxfs',
+  ]);
   const finish = () => {
-    if (format !== null) styles.push(compose(format.attributes, format.alignment, { formats, fonts, fills, borders }));
+    if (format !== null)
+      styles.push(compose(format.attributes, format.alignment, { formats, fonts, fills, borders }));
     format = null;
   };
 
@@ -91,7 +101,11 @@ interface Tables {
   readonly borders: readonly IBorderData[];
 }
 
-function compose(xf: Tag['attributes'], alignment: Tag['attributes'] | null, tables: Tables): IStyleData | null {
+function compose(
+  xf: Tag['attributes'],
+  alignment: Tag['attributes'] | null,
+  tables: Tables,
+): IStyleData | null {
   // font 0 is the workbook's plain font: its face and size are everybody's and need not stand in every cell
   const font = Number(xf.fontId ?? 0);
   const style: IStyleData = font === 0 ? {} : { ...tables.fonts[font] };
@@ -111,7 +125,11 @@ function compose(xf: Tag['attributes'], alignment: Tag['attributes'] | null, tab
 
 const isTrue = (text: string | undefined) => text === '1' || text === 'true';
 
-function readFontTag({ name, attributes }: Tag, font: IStyleData | undefined, theme: readonly string[]): void {
+function readFontTag(
+  { name, attributes }: Tag,
+  font: IStyleData | undefined,
+  theme: readonly string[],
+): void {
   if (font === undefined) return;
   const on = attributes.val === undefined || isTrue(attributes.val) ? 1 : 0;
   if (name === 'b' && on) font.bl = 1;
@@ -127,7 +145,20 @@ function readFontTag({ name, attributes }: Tag, font: IStyleData | undefined, th
 }
 
 /** Theme slots in the order in which cells number them: light 1, dark 1, light 2, dark 2, then the accents. */
-const THEME_ORDER = ['lt1', 'dk1', 'lt2', 'dk2', 'accent1', 'accent2', 'accent3', 'accent4', 'accent5', 'accent6', 'hlink', 'folHlink'];
+const THEME_ORDER = [
+  'lt1',
+  'dk1',
+  'lt2',
+  'dk2',
+  'accent1',
+  'accent2',
+  'accent3',
+  'accent4',
+  'accent5',
+  'accent6',
+  'hlink',
+  'folHlink',
+];
 
 function readTheme(xml: string): string[] {
   const colours = new Map<string, string>();
@@ -144,7 +175,12 @@ function readTheme(xml: string): string[] {
 
 function readColour(attributes: Tag['attributes'], theme: readonly string[]): IColorStyle | null {
   const hex = /^[0-9a-f]{8}$/i.test(attributes.rgb ?? '') ? attributes.rgb?.slice(2) : undefined;
-  const base = hex !== undefined ? `#${hex.toLowerCase()}` : attributes.theme === undefined ? '' : (theme[Number(attributes.theme)] ?? '');
+  const base =
+    hex !== undefined
+      ? `#${hex.toLowerCase()}`
+      : attributes.theme === undefined
+        ? ''
+        : (theme[Number(attributes.theme)] ?? '');
   return base === '' ? null : { rgb: tinted(base, Number(attributes.tint ?? 0)) };
 }
 

@@ -17,7 +17,10 @@ const VERTICAL_WORDS = invert(VERTICAL);
 
 export function createStyleSheet(): StyleSheet {
   const fonts = new Pool('<font><sz val="11"/><name val="Calibri"/><family val="2"/></font>');
-  const fills = new Pool('<fill><patternFill patternType="none"/></fill>', '<fill><patternFill patternType="gray125"/></fill>');
+  const fills = new Pool(
+    '<fill><patternFill patternType="none"/></fill>',
+    '<fill><patternFill patternType="gray125"/></fill>',
+  );
   const borders = new Pool('<border><left/><right/><top/><bottom/><diagonal/></border>');
   const formats = new Pool();
   const cells = new Pool('<xf numFmtId="0" fontId="0" fillId="0" borderId="0" xfId="0"/>');
@@ -25,7 +28,8 @@ export function createStyleSheet(): StyleSheet {
 
   function add(style: IStyleData): number {
     const pattern = style.n?.pattern;
-    const numFmt = pattern === undefined || pattern === 'General' ? 0 : FIRST_OWN_FORMAT + formats.add(escapeXml(pattern));
+    const numFmt =
+      pattern === undefined || pattern === 'General' ? 0 : FIRST_OWN_FORMAT + formats.add(escapeXml(pattern));
     const font = fonts.add(fontXml(style));
     const fill = fills.add(fillXml(style));
     const border = borders.add(borderXml(style.bd));
@@ -50,7 +54,9 @@ export function createStyleSheet(): StyleSheet {
       return found;
     },
     xml() {
-      const own = formats.items.map((code, index) => `<numFmt numFmtId="${FIRST_OWN_FORMAT + index}" formatCode="${code}"/>`);
+      const own = formats.items.map(
+        (code, index) => `<numFmt numFmtId="${FIRST_OWN_FORMAT + index}" formatCode="${code}"/>`,
+      );
       return [
         `${XML_HEAD}<styleSheet xmlns="${MAIN}">`,
         own.length > 0 ? `<numFmts count="${own.length}">${own.join('')}</numFmts>` : '',
@@ -88,10 +94,10 @@ function fontXml(style: IStyleData): string {
   const face = style.ff ?? 'Calibri';
   return [
     '<font>',
-    style.bl === 1 ? '<b/>' : '',
-    style.it === 1 ? '<i/>' : '',
-    style.st?.s === 1 ? '<strike/>' : '',
-    style.ul?.s === 1 ? '<u/>' : '',
+    Number(style.bl) === 1 ? '<b/>' : '',
+    Number(style.it) === 1 ? '<i/>' : '',
+    Number(style.st?.s) === 1 ? '<strike/>' : '',
+    Number(style.ul?.s) === 1 ? '<u/>' : '',
     `<sz val="${style.fs ?? 11}"/>`,
     colourXml('color', style.cl?.rgb),
     `<name val="${escapeXml(face)}"/><family val="2"/></font>`,
@@ -121,7 +127,7 @@ function alignmentXml(style: IStyleData): string {
   const inside = [
     horizontal === undefined ? '' : ` horizontal="${horizontal}"`,
     vertical === undefined ? '' : ` vertical="${vertical}"`,
-    style.tb === WRAP ? ' wrapText="1"' : '',
+    Number(style.tb) === WRAP ? ' wrapText="1"' : '',
   ].join('');
   return inside === '' ? '' : `<alignment${inside}/>`;
 }
@@ -131,7 +137,11 @@ function colourXml(element: string, colour: Nullable<string>): string {
   const hex = /^#([0-9a-f]{6})$/i.exec(colour ?? '')?.[1];
   const channels = /^rgba?\((\d{1,3}),\s*(\d{1,3}),\s*(\d{1,3})/.exec(colour ?? '');
   const found =
-    hex ?? channels?.slice(1, 4).map((one) => Math.min(255, Number(one)).toString(16).padStart(2, '0')).join('');
+    hex ??
+    channels
+      ?.slice(1, 4)
+      .map((one) => Math.min(255, Number(one)).toString(16).padStart(2, '0'))
+      .join('');
   return found === undefined ? '' : `<${element} rgb="FF${found.toUpperCase()}"/>`;
 }
 

@@ -72,13 +72,19 @@ export function withoutTables(
 function absolute({ startRow, startColumn, endRow, endColumn }: Rectangle): string {
   const cell = (row: number, column: number) => `$${columnLetters(column)}$${row + 1}`;
   const first = cell(startRow, startColumn);
-  return cellName(startRow, startColumn) === cellName(endRow, endColumn) ? first : `${first}:${cell(endRow, endColumn)}`;
+  return cellName(startRow, startColumn) === cellName(endRow, endColumn)
+    ? first
+    : `${first}:${cell(endRow, endColumn)}`;
 }
 
 /** "[#All]", "[Span]", "[[#Headers],[Span]:[Load]]", "[@Span]", "" -> cells of the table; null when not understood. */
 function resolve(table: FileTable, specifier: string, row: number): Rectangle | null {
   const { range } = table;
-  const data = { ...range, startRow: range.startRow + table.headerRows, endRow: range.endRow - table.totalRows };
+  const data = {
+    ...range,
+    startRow: range.startRow + table.headerRows,
+    endRow: range.endRow - table.totalRows,
+  };
   if (specifier === '' || specifier === '[]') return data;
   let inside = specifier.slice(1, -1).trim();
   let rows: Rectangle | null = data;
@@ -88,7 +94,9 @@ function resolve(table: FileTable, specifier: string, row: number): Rectangle | 
     inside = inside.slice(1).trim();
     if (inside === '') return rows;
   }
-  const pieces = inside.startsWith('[') ? [...inside.matchAll(/\[((?:[^[\]']|'.)*)\]|:/g)] : [[`[${inside}]`, inside]];
+  const pieces = inside.startsWith('[')
+    ? [...inside.matchAll(/\[((?:[^[\]']|'.)*)\]|:/g)]
+    : [[`[${inside}]`, inside]];
   let from: number | null = null;
   let to: number | null = null;
   let joining = false;
@@ -103,17 +111,28 @@ function resolve(table: FileTable, specifier: string, row: number): Rectangle | 
       if (rows === null) return null;
       continue;
     }
-    const column = table.columns.findIndex((one) => one.toLowerCase() === word.replace(/'(.)/g, '$1').toLowerCase());
+    const column = table.columns.findIndex(
+      (one) => one.toLowerCase() === word.replace(/'(.)/g, '$1').toLowerCase(),
+    );
     if (column < 0) return null;
     if (joining) to = column;
     else from = to = column;
   }
   if (rows === null) return null;
   if (from === null || to === null) return rows;
-  return { ...rows, startColumn: range.startColumn + Math.min(from, to), endColumn: range.startColumn + Math.max(from, to) };
+  return {
+    ...rows,
+    startColumn: range.startColumn + Math.min(from, to),
+    endColumn: range.startColumn + Math.max(from, to),
+  };
 }
 
-function special(word: string, { range, headerRows, totalRows }: FileTable, data: Rectangle, here: Rectangle | null): Rectangle | null {
+function special(
+  word: string,
+  { range, headerRows, totalRows }: FileTable,
+  data: Rectangle,
+  here: Rectangle | null,
+): Rectangle | null {
   switch (word) {
     case '#all':
       return range;

@@ -11,7 +11,6 @@ import { callsSpanrow, toFile } from './formula-text';
 import { createStyleSheet, type StyleSheet } from './styles-write';
 import { XML_HEAD, encode, escapeXml } from './xml';
 import { zip } from './zip';
-import { columnLetters } from '../../taskpane/address';
 
 export interface WrittenFile {
   readonly bytes: Uint8Array<ArrayBuffer>;
@@ -33,7 +32,10 @@ export async function writeXlsx(contents: BookContents): Promise<WrittenFile> {
   const sheetStyles = createStyleSheet();
   const strings = new SharedStrings();
   const parts = new Map<string, Uint8Array>();
-  const sheets = contents.sheets.map((sheet) => ({ ...sheet, data: contents.snapshot.sheets[sheet.id] ?? {} }));
+  const sheets = contents.sheets.map((sheet) => ({
+    ...sheet,
+    data: contents.snapshot.sheets[sheet.id] ?? {},
+  }));
   const bodies = sheets.map((sheet) => sheetXml(sheet, contents.snapshot, sheetStyles, strings, notes));
 
   parts.set('[Content_Types].xml', encode(contentTypes(sheets.length)));
@@ -76,10 +78,11 @@ function sheetXml(
   const rows = new Map<number, Map<number, string>>();
   const put = (row: number, column: number, xml: string) => {
     let cells = rows.get(row);
-    if (cells === undefined) rows.set(row, (cells = new Map()));
+    if (cells === undefined) rows.set(row, (cells = new Map<number, string>()));
     cells.set(column, xml);
   };
-  const styleAt = (row: number, column: number) => styleAttribute(data.cellData?.[row]?.[column], book, styles);
+  const styleAt = (row: number, column: number) =>
+    styleAttribute(data.cellData?.[row]?.[column], book, styles);
   let rich = 0;
 
   // formats first, so that empty cells with a border or a colour are there; values then replace them
@@ -90,12 +93,21 @@ function sheetXml(
       if (style !== '') put(row, column, `<c r="${cellName(row, column)}"${style}/>`);
       if (cell?.p) rich += 1;
     }
-  for (const cell of sheet.cells) put(cell.row, cell.column, cellXml(cell, styleAt(cell.row, cell.column), strings));
+  for (const cell of sheet.cells)
+    put(cell.row, cell.column, cellXml(cell, styleAt(cell.row, cell.column), strings));
   for (const { row, column, value } of sheet.spilled)
-    put(row, column, cellXml({ row, column, value, formula: null, spill: null }, styleAt(row, column), strings));
-  if (rich > 0) notes.push(`Sheet "${sheet.name}": the mixed formatting inside ${rich} text cell${rich === 1 ? '' : 's'}; the text itself is kept.`);
+    put(
+      row,
+      column,
+      cellXml({ row, column, value, formula: null, spill: null }, styleAt(row, column), strings),
+    );
+  if (rich > 0)
+    notes.push(
+      `Sheet "${sheet.name}": the mixed formatting inside ${rich} text cell${rich === 1 ? '' : 's'}; the text itself is kept.`,
+    );
 
-  for (const key of Object.keys(data.rowData ?? {})) if (!rows.has(Number(key))) rows.set(Number(key), new Map());
+  for (const key of Object.keys(data.rowData ?? {}))
+    if (!rows.has(Number(key))) rows.set(Number(key), new Map<number, string>());
   const body = [...rows.entries()]
     .sort(([a], [b]) => a - b)
     .map(([row, cells]) => {
@@ -159,8 +171,10 @@ function rowAttributes(data: Partial<IWorksheetData>, row: number): string {
   const size = data.rowData?.[row];
   const height = size?.h ?? null;
   return [
-    height !== null && height !== data.defaultRowHeight ? ` ht="${height * POINTS_PER_PIXEL}" customHeight="1"` : '',
-    size?.hd === 1 ? ' hidden="1"' : '',
+    height !== null && height !== data.defaultRowHeight
+      ? ` ht="${height * POINTS_PER_PIXEL}" customHeight="1"`
+      : '',
+    Number(size?.hd) === 1 ? ' hidden="1"' : '',
   ].join('');
 }
 
@@ -176,11 +190,14 @@ function columnsXml(data: Partial<IWorksheetData>): string {
 }
 
 function viewXml(data: Partial<IWorksheetData>): string {
-  const grid = data.showGridlines === 0 ? ' showGridLines="0"' : '';
+  const grid = Number(data.showGridlines ?? 1) === 0 ? ' showGridLines="0"' : '';
   const across = data.freeze?.xSplit ?? 0;
   const down = data.freeze?.ySplit ?? 0;
   if (across <= 0 && down <= 0) return `<sheetViews><sheetView${grid} workbookViewId="0"/></sheetViews>`;
-  const corner = cellName(Math.max(0, data.freeze?.startRow ?? down), Math.max(0, data.freeze?.startColumn ?? across));
+  const corner = cellName(
+    Math.max(0, data.freeze?.startRow ?? down),
+    Math.max(0, data.freeze?.startColumn ?? across),
+  );
   const where = down > 0 && across > 0 ? 'bottomRight' : down > 0 ? 'bottomLeft' : 'topRight';
   const split = `${across > 0 ? ` xSplit="${across}"` : ''}${down > 0 ? ` ySplit="${down}"` : ''}`;
   return `<sheetViews><sheetView${grid} workbookViewId="0"><pane${split} topLeftCell="${corner}" activePane="${where}" state="frozen"/></sheetView></sheetViews>`;
@@ -188,7 +205,7 @@ function viewXml(data: Partial<IWorksheetData>): string {
 
 function workbookXml(sheets: readonly SheetToWrite[], contents: BookContents): string {
   const list = sheets.map(({ name, data }, index) => {
-    const hidden = data.hidden === 1 ? ' state="hidden"' : '';
+    const hidden = Number(data.hidden) === 1 ? ' state="hidden"' : '';
     return `<sheet name="${escapeXml(name)}" sheetId="${index + 1}"${hidden} r:id="rId${index + 1}"/>`;
   });
   const names = contents.names.map(({ name, refersTo, sheet }) => {
@@ -223,7 +240,8 @@ function contentTypes(sheets: number): string {
 
 function relations(targets: readonly (readonly [kind: string, target: string])[]): string {
   const list = targets.map(
-    ([kind, target], index) => `<Relationship Id="rId${index + 1}" Type="${RELATIONS}/${kind}" Target="${target}"/>`,
+    ([kind, target], index) =>
+      `<Relationship Id="rId${index + 1}" Type="${RELATIONS}/${kind}" Target="${target}"/>`,
   );
   return `${XML_HEAD}<Relationships xmlns="${PACKAGE}/relationships">${list.join('')}</Relationships>`;
 }
@@ -247,7 +265,9 @@ class SharedStrings {
     return this.index.size - 1;
   }
   xml(): string {
-    const items = [...this.index.keys()].map((text) => `<si><t xml:space="preserve">${escapeXml(text)}</t></si>`);
+    const items = [...this.index.keys()].map(
+      (text) => `<si><t xml:space="preserve">${escapeXml(text)}</t></si>`,
+    );
     return `${XML_HEAD}<sst xmlns="${MAIN}" count="${this.count}" uniqueCount="${items.length}">${items.join('')}</sst>`;
   }
 }

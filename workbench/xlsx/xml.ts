@@ -26,7 +26,8 @@ export function* tags(xml: string): Generator<Tag> {
 
 function attributesOf(inside: string): Record<string, string> {
   const found: Record<string, string> = Object.create(null) as Record<string, string>;
-  for (const [, name, double, single] of inside.matchAll(ATTRIBUTE)) found[name ?? ''] = unescapeXml(double ?? single ?? '');
+  for (const [, name, double, single] of inside.matchAll(ATTRIBUTE))
+    found[name ?? ''] = unescapeXml(double ?? single ?? '');
   return found;
 }
 
@@ -34,11 +35,14 @@ const ENTITIES: Readonly<Record<string, string>> = { amp: '&', lt: '<', gt: '>',
 
 export function unescapeXml(text: string): string {
   if (!text.includes('&')) return text;
-  return text.replace(/&(?:#x([0-9a-f]{1,6})|#(\d{1,7})|(\w+));/gi, (whole, hex?: string, decimal?: string, name?: string) => {
-    if (name !== undefined) return ENTITIES[name] ?? whole;
-    const code = hex === undefined ? Number(decimal) : parseInt(hex, 16);
-    return code <= 0x10ffff ? String.fromCodePoint(code) : whole;
-  });
+  return text.replace(
+    /&(?:#x([0-9a-f]{1,6})|#(\d{1,7})|(\w+));/gi,
+    (whole, hex?: string, decimal?: string, name?: string) => {
+      if (name !== undefined) return ENTITIES[name] ?? whole;
+      const code = hex === undefined ? Number(decimal) : parseInt(hex, 16);
+      return code <= 0x10ffff ? String.fromCodePoint(code) : whole;
+    },
+  );
 }
 
 /** Escapes text for XML and drops what XML 1.0 cannot hold (control characters other than tab and line breaks). */
@@ -54,6 +58,7 @@ export function escapeXml(text: string): string {
   );
 }
 
-export const decode = (bytes: Uint8Array | undefined): string => (bytes === undefined ? '' : new TextDecoder().decode(bytes));
+export const decode = (bytes: Uint8Array | undefined): string =>
+  bytes === undefined ? '' : new TextDecoder().decode(bytes);
 export const encode = (text: string): Uint8Array => new TextEncoder().encode(text);
 export const XML_HEAD = '<?xml version="1.0" encoding="UTF-8" standalone="yes"?>\n';

@@ -66,7 +66,8 @@ function readDirectory(bytes: Uint8Array, limits: ZipLimits): Entry[] {
   if (end < stop || end < 0)
     throw new FileProblem('it is not an .xlsx file, or its end is missing (an .xlsx file is a zip archive).');
   const count = view.getUint16(end + 10, true);
-  if (count > limits.entries) throw new FileProblem(`it has ${count} parts; at most ${limits.entries} are read.`);
+  if (count > limits.entries)
+    throw new FileProblem(`it has ${count} parts; at most ${limits.entries} are read.`);
   const entries: Entry[] = [];
   const text = new TextDecoder();
   let at = view.getUint32(end + 16, true);
@@ -92,7 +93,8 @@ async function readEntry(bytes: Uint8Array, entry: Entry, left: number): Promise
   const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
   if (entry.offset + 30 > bytes.length || view.getUint32(entry.offset, true) !== LOCAL)
     throw new FileProblem(`its part ${entry.name} is missing or damaged.`);
-  const start = entry.offset + 30 + view.getUint16(entry.offset + 26, true) + view.getUint16(entry.offset + 28, true);
+  const start =
+    entry.offset + 30 + view.getUint16(entry.offset + 26, true) + view.getUint16(entry.offset + 28, true);
   const packed = bytes.subarray(start, start + entry.compressed);
   if (packed.length < entry.compressed) throw new FileProblem(`it is cut short in its part ${entry.name}.`);
   if (entry.method === STORED) {
@@ -179,13 +181,26 @@ function entryHeader(name: string, part: Uint8Array, packed: number, method: num
   const DATE = 0x5c21; // 2026-01-01, the format's own bit fields
   const NAMES_IN_UTF8 = 0x0800;
   return join(
-    [half(20), half(NAMES_IN_UTF8), half(method), half(0), half(DATE), word(crc32(part)), word(packed), word(part.length), half(byteLength(name)), half(0)],
+    [
+      half(20),
+      half(NAMES_IN_UTF8),
+      half(method),
+      half(0),
+      half(DATE),
+      word(crc32(part)),
+      word(packed),
+      word(part.length),
+      half(byteLength(name)),
+      half(0),
+    ],
     26,
   );
 }
 
 async function deflate(part: Uint8Array): Promise<Uint8Array> {
-  const packed = await new Response(streamOf(part).pipeThrough(new CompressionStream('deflate-raw'))).arrayBuffer();
+  const packed = await new Response(
+    streamOf(part).pipeThrough(new CompressionStream('deflate-raw')),
+  ).arrayBuffer();
   return new Uint8Array(packed);
 }
 
