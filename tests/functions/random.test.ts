@@ -140,35 +140,34 @@ const BEAMS: unknown[][][] = [
   ],
 ];
 const beam = fc.constantFrom(...BEAMS);
+/** An amount with two decimals, as people write them. */
+const plain = (min: number, max: number) =>
+  fc.integer({ min: 100 * min, max: 100 * max }).map((n) => n / 100);
 const safe = fc
   .oneof(
+    fc.tuple(fc.constantFrom('pin', 'guided'), fc.integer({ min: 1, max: 9 })),
+    fc.tuple(fc.constant('spring'), fc.integer({ min: 1, max: 9 }), fc.constant(BLANK), plain(1, 9999)),
     fc.tuple(
-      fc.constantFrom('pin', 'guided', 'spring'),
-      fc.integer({ min: 1, max: 9 }),
-      fc.constant(BLANK),
-      fc.double({ min: 1, max: 1e4, noNaN: true }),
-    ),
-    fc.tuple(
-      fc.constantFrom('point', 'couple'),
+      fc.constantFrom('point', 'couple', 'point'),
       fc.integer({ min: 0, max: 10 }),
       fc.constant(BLANK),
-      fc.double({ min: -50, max: 50, noNaN: true }),
+      plain(-50, 50),
       fc.constant(BLANK),
       fc.constant(BLANK),
       fc.constantFrom('G', 'Q'),
     ),
     fc.tuple(
-      fc.constantFrom('uniform', 'varying', 'curvature'),
+      fc.constant('varying'),
       fc.integer({ min: 0, max: 4 }),
       fc.integer({ min: 5, max: 10 }),
-      fc.double({ min: -50, max: 50, noNaN: true }),
-      fc.double({ min: 1, max: 9, noNaN: true }),
+      plain(-50, 50),
+      plain(1, 9),
     ),
   )
-  .map((cells: unknown[]) => [...cells, ...Array<unknown>(8 - cells.length).fill(BLANK)]);
+  .map((cells: unknown[]) => full(...cells));
 
 const table = fc.oneof(
-  { weight: 3, arbitrary: fc.tuple(beam, fc.array(safe, { maxLength: 4 })).map((parts) => parts.flat()) },
+  { weight: 6, arbitrary: fc.tuple(beam, fc.array(safe, { maxLength: 4 })).map((parts) => parts.flat()) },
   { weight: 3, arbitrary: fc.tuple(beam, fc.array(row, { maxLength: 3 })).map((parts) => parts.flat()) },
   { weight: 2, arbitrary: fc.array(row, { minLength: 1, maxLength: 8 }) },
   {
@@ -278,6 +277,6 @@ describe.each(METADATA.functions.filter((one) => one.parameters.length > 0))('$i
   });
 
   it('was answered often enough for that to mean something', () => {
-    expect(answered[id]).toBeGreaterThan(4);
+    expect(answered[id]).toBeGreaterThan(RUNS / 20);
   });
 });
