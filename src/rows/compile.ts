@@ -7,14 +7,15 @@ import { combineAtRow, CASE_NAME } from './combine';
 import { buildPlan, type BuildResult } from './build';
 import type { Bindings } from './bindings';
 import { isBlank, isErrorCell, showCell, type Cell } from './cell';
-import { AT, fieldsOf, LENGTH, SPECS, takes, TO, type Field, type ItemSpec } from './items';
+import { AT, fieldsOf, LENGTH, SECOND_MOMENT, SPECS, takes, TO, type Field, type ItemSpec } from './items';
 import { layOut, type Layout, type RowInfo } from './layout';
 import { readLimitCell } from './limit';
 import type { Placed, Plan, PlannedLimit } from './plan';
 import { readScalar, readUnitCell, type Reading, type Scalar } from './scalar';
-import { readSettings } from './settings';
-import type { Unit } from './units';
-import { COLUMNS, type ColumnName, type ItemName } from './words';
+import { readSettings, type Settings } from './settings';
+import { usualUnit } from './system';
+import { parseUnit, type Unit } from './units';
+import { COLUMNS, type ItemName } from './words';
 
 export interface CompiledTable {
   /** issues that need no names */
@@ -48,8 +49,7 @@ export function compileTable(cells: readonly (readonly unknown[])[]): CompiledTa
 
 class Compiler implements Reading {
   readonly system: Plan['system'];
-  private readonly axis: 1 | -1;
-  private readonly unitsRow: boolean;
+  private readonly settings: Settings;
   private readonly cases: string[] = [];
   private readonly names: string[] = [];
   private readonly uses = new Map<string, { row: number; column: string }>();
@@ -62,16 +62,13 @@ class Compiler implements Reading {
     readonly cautions: Issue[],
     readonly text: boolean,
   ) {
-    const settings = readSettings(rows, issues);
-    this.system = settings.system;
-    this.axis = settings.axis;
-    this.unitsRow = settings.unitsRow;
+    this.settings = readSettings(rows, issues);
+    this.system = this.settings.system;
   }
 
   plan(): Plan {
     const placed: Placed[] = [];
     const limits: RowInfo[] = [];
-    let secondMoment: Unit | null = null;
     let any = false;
     for (const info of this.rows) {
       if (info.item === null) continue;
@@ -80,24 +77,30 @@ class Compiler implements Reading {
       if (info.item === 'limit') limits.push(info);
       if (SPECS[info.item].group === 'setting') continue;
       const row = this.placedRow(info, info.item);
-      if (row === null) continue;
-      placed.push(row);
-      if (row.item === 'I' && row.value?.unit && secondMoment === null) secondMoment = row.value.unit;
+      if (row !== null) placed.push(row);
     }
     if (!any && this.issues.length === 0) this.issues.push({ code: 'no-rows', kind: 'invalid' });
     this.similarCases();
     return {
-      system: this.system,
-      axis: this.axis,
+      ...this.settings,
       cases: this.cases,
       names: this.names,
       uses: this.uses,
       places: this.places,
       placed,
       limits: limits.map((info) => this.limit(info)).filter((limit) => limit !== null),
-      secondMoment,
+      secondMoment: this.secondMoment(placed),
       cautions: this.cautions,
     };
+  }
+
+  /** The unit of the first I row, for REQUIREDI; the usual one where only a name carries the unit. */
+  private secondMoment(placed: readonly Placed[]): Unit | null {
+    const first = placed.find(({ item }) => item === 'I');
+    if (first === undefined || this.system === null) return null;
+    if (first.value?.unit) return first.value.unit;
+    const usual = parseUnit(usualUnit(SECOND_MOMENT, this.system));
+    return usual.ok ? usual.unit : null;
   }
 
   slot(name: string, row: number, column: string): number {
@@ -109,7 +112,7 @@ class Compiler implements Reading {
 
   /** Said once: one missing `units` row is one mistake. With a faulty `units` row it has been said already. */
   unitWithoutRow(row: number, column: string, found: string): void {
-    if (this.unitsRow || this.unitWithoutRowSaid) return;
+    if (this.settings.unitsRow !== null || this.unitWithoutRowSaid) return;
     this.unitWithoutRowSaid = true;
     this.issues.push({ code: 'units-row-missing', kind: 'invalid', row, column, found });
   }
@@ -162,7 +165,7 @@ class Compiler implements Reading {
       end,
       case: caseIndex,
       positive: spec.positive,
-      sign: spec.signed ? this.axis : 1,
+      sign: spec.signed ? this.settings.axis : 1,
     };
   }
 
@@ -283,5 +286,3 @@ class Compiler implements Reading {
     return { row, ...read, combination: combined.combination };
   }
 }
-
-export type { ColumnName };

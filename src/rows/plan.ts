@@ -35,6 +35,8 @@ export interface PlannedLimit {
 export interface Plan {
   readonly system: UnitSystem | null;
   readonly axis: 1 | -1;
+  readonly unitsRow: number | null;
+  readonly axisRow: number | null;
   readonly cases: readonly string[];
   /** names in the order of their slots (slot 0 is x) */
   readonly names: readonly string[];

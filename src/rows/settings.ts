@@ -12,8 +12,9 @@ export interface Settings {
   readonly system: UnitSystem | null;
   /** 1: down, -1: up */
   readonly axis: 1 | -1;
-  /** there is a `units` row (perhaps a wrong one) */
-  readonly unitsRow: boolean;
+  /** the `units` row (perhaps a wrong one) and the `axis` row, if there are any */
+  readonly unitsRow: number | null;
+  readonly axisRow: number | null;
 }
 
 export function readSettings(rows: readonly RowInfo[], issues: Issue[]): Settings {
@@ -32,7 +33,7 @@ export function readSettings(rows: readonly RowInfo[], issues: Issue[]): Setting
       axisRow ??= info.row;
     }
   }
-  return { system, axis, unitsRow: unitsRow !== null };
+  return { system, axis, unitsRow, axisRow };
 }
 
 function twice(item: string, row: number, first: number): Issue {

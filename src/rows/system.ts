@@ -1,7 +1,7 @@
 /** The units of a table: what its `units` row says, and the way of any other unit into them. */
 import type { ModelUnits } from '../beam/model';
 import { power, times, toNumber, type Ratio } from './rational';
-import { parseUnit, type Dimension, type Unit } from './units';
+import type { Dimension, Unit } from './units';
 
 export interface UnitSystem {
   readonly force: Unit;
@@ -112,5 +112,3 @@ export function sameDimension(unit: Dimension, expected: Dimension): boolean {
   if (expected.force === 1 && expected.length === 1) return unit.angle === 0;
   return unit.angle === 0;
 }
-
-export { parseUnit };
