@@ -44,7 +44,11 @@ export function compare(
   const oracle = solveOracle(model, factors);
   const none = { errors: {}, worst: 0, where: '' };
   if (!engine.response) {
-    return { ...none, verdict: oracle.stable ? 'only the oracle solves' : 'both refuse', issue: engine.issue };
+    return {
+      ...none,
+      verdict: oracle.stable ? 'only the oracle solves' : 'both refuse',
+      issue: engine.issue,
+    };
   }
   if (!oracle.stable) return { ...none, verdict: 'only the engine solves', issue: null };
   return { ...measure(model, engine.response, oracle, places), verdict: 'both solve', issue: null };
@@ -64,7 +68,11 @@ export function measure(
     if (i % stride !== 0 && next !== undefined) return;
     samples.push([x, 'left'], [x, 'right']);
     if (next !== undefined && next > x) {
-      samples.push([x + 0.31 * (next - x), 'right'], [x + 0.5 * (next - x), 'right'], [x + 0.83 * (next - x), 'right']);
+      samples.push(
+        [x + 0.31 * (next - x), 'right'],
+        [x + 0.5 * (next - x), 'right'],
+        [x + 0.83 * (next - x), 'right'],
+      );
     }
   });
   const errors: Record<string, number> = {};

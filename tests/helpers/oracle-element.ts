@@ -50,7 +50,9 @@ export class Element {
     const at1 = this.solutions.map((s) => [sum(s.v), sum(s.theta), sum(s.M), sum(s.S)]);
     const T = (row: number, column: number): Big => at1[column]![row]!;
     // (v1, theta1) = A (v0, theta0) + B (M0, S0) + c  ->  (M0, S0) = B^-1 ((v1, theta1) - A (v0, theta0) - c)
-    const det = T(0, 2).times(T(1, 3)).minus(T(0, 3).times(T(1, 2)));
+    const det = T(0, 2)
+      .times(T(1, 3))
+      .minus(T(0, 3).times(T(1, 2)));
     const inverse = [
       [T(1, 3).over(det), T(0, 3).negated().over(det)],
       [T(1, 2).negated().over(det), T(0, 2).over(det)],
@@ -68,14 +70,23 @@ export class Element {
     const ends = (v0: Big, t0: Big, v1: Big, t1: Big, loaded: boolean): Big[] => {
       const [M0, S0] = startForces(v0, t0, v1, t1, loaded);
       const end = (row: number): Big => {
-        let value = T(row, 0).times(v0).plus(T(row, 1).times(t0)).plus(T(row, 2).times(M0)).plus(T(row, 3).times(S0));
+        let value = T(row, 0)
+          .times(v0)
+          .plus(T(row, 1).times(t0))
+          .plus(T(row, 2).times(M0))
+          .plus(T(row, 3).times(S0));
         if (loaded) value = value.plus(T(row, 4));
         return value;
       };
       return [S0.negated(), M0, end(3), end(2).negated()];
     };
     const [o, l] = [Big.zero, Big.one];
-    const columns = [ends(l, o, o, o, false), ends(o, l, o, o, false), ends(o, o, l, o, false), ends(o, o, o, l, false)];
+    const columns = [
+      ends(l, o, o, o, false),
+      ends(o, l, o, o, false),
+      ends(o, o, l, o, false),
+      ends(o, o, o, l, false),
+    ];
     this.stiffness = [0, 1, 2, 3].map((row) => columns.map((column) => column[row]!));
     this.loadForces = ends(o, o, o, o, true);
   }
@@ -95,7 +106,13 @@ export class Element {
       });
       return out;
     };
-    this.fields = { v: combine('v'), theta: combine('theta'), M: combine('M'), S: combine('S'), V: combine('V') };
+    this.fields = {
+      v: combine('v'),
+      theta: combine('theta'),
+      M: combine('M'),
+      S: combine('S'),
+      V: combine('V'),
+    };
   }
 
   value(field: Field, x: number): Big {

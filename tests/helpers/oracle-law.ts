@@ -26,7 +26,9 @@ export function lawSeries(
   if (law.kind === 'linear') {
     const start = Big.of(law.start);
     if (law.start === law.end) return [start];
-    const rise = Big.of(law.end).minus(start).over(Big.of(stretch.to).minus(Big.of(stretch.from)));
+    const rise = Big.of(law.end)
+      .minus(start)
+      .over(Big.of(stretch.to).minus(Big.of(stretch.from)));
     return [start.plus(rise.times(x0.minus(Big.of(stretch.from)))), rise.times(h)];
   }
   for (const points of POINTS) {
@@ -37,7 +39,13 @@ export function lawSeries(
   return null;
 }
 
-function interpolate(at: (x: number) => number, a: number, b: number, points: number, force: boolean): Series | null {
+function interpolate(
+  at: (x: number) => number,
+  a: number,
+  b: number,
+  points: number,
+  force: boolean,
+): Series | null {
   const x0 = Big.of(a);
   const h = Big.of(b).minus(x0);
   const t: Big[] = [];

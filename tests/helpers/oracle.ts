@@ -51,7 +51,11 @@ interface Joint {
   offset: Big;
 }
 
-export function solveOracle(model: BeamModel, factors: readonly number[] | null = null, bits?: number): Oracle {
+export function solveOracle(
+  model: BeamModel,
+  factors: readonly number[] | null = null,
+  bits?: number,
+): Oracle {
   const breaks = breaksOf(model);
   let shortest = Infinity;
   for (let i = 0; i + 1 < breaks.length; i++) shortest = Math.min(shortest, breaks[i + 1]! - breaks[i]!);
@@ -220,12 +224,7 @@ function build(model: BeamModel, factors: readonly number[] | null, breaks: numb
     elements.forEach((element, i) => {
       const a = joints[i]!;
       const b = joints[i + 1]!;
-      element.settle(
-        solved[a.vR]!.plus(a.offset),
-        solved[a.tR]!.plus(a.kink),
-        solved[b.vL]!,
-        solved[b.tL]!,
-      );
+      element.settle(solved[a.vR]!.plus(a.offset), solved[a.tR]!.plus(a.kink), solved[b.vL]!, solved[b.tL]!);
     });
   }
 
@@ -278,7 +277,8 @@ function build(model: BeamModel, factors: readonly number[] | null, breaks: numb
           const i = joints.findIndex((j) => j.x === s.at);
           const joint = joints[i]!;
           const leftOf = (field: Field): Big => (i > 0 ? elements[i - 1]!.value(field, s.at) : Big.zero);
-          const rightOf = (field: Field): Big => (i < elements.length ? elements[i]!.value(field, s.at) : Big.zero);
+          const rightOf = (field: Field): Big =>
+            i < elements.length ? elements[i]!.value(field, s.at) : Big.zero;
           const force = rightOf('S').minus(leftOf('S')).plus(joint.force);
           const couple = rightOf('M').minus(leftOf('M')).minus(joint.couple);
           return {

@@ -5,7 +5,15 @@
  * foundations, shear and axial force stand between 1/100 and 100 times the beam's own stiffness. Most beams are stable; a beam that is not
  * (a hinge too many, a compression too large) is a test of the verdict.
  */
-import type { BeamModel, Foundation, Law, Load, Release, SectionStretch, Support } from '../../src/beam/model';
+import type {
+  BeamModel,
+  Foundation,
+  Law,
+  Load,
+  Release,
+  SectionStretch,
+  Support,
+} from '../../src/beam/model';
 
 export type Random = () => number;
 
@@ -69,7 +77,8 @@ export function randomBeam(seed: number, recipe: Recipe = EVERYTHING): BeamModel
   const law = (size: number, positive: boolean): Law => {
     const kind = recipe.laws ? whole(0, 5) : whole(0, 3);
     if (kind <= 1) return { kind: 'linear', start: size, end: size };
-    if (kind <= 3) return { kind: 'linear', start: size, end: size * (positive ? between(0.2, 5) : between(-2, 2)) };
+    if (kind <= 3)
+      return { kind: 'linear', start: size, end: size * (positive ? between(0.2, 5) : between(-2, 2)) };
     const a = positive ? between(-0.6, 1.5) : between(-2, 2);
     const b = between(1, 5);
     const c = chance(0.5) ? 3 : 2;
@@ -90,7 +99,14 @@ export function randomBeam(seed: number, recipe: Recipe = EVERYTHING): BeamModel
     if (taken.has(at)) return;
     taken.add(at);
     const kind = chance(0.6) ? 0 : whole(0, 5);
-    const none = { at, held: false, clamped: false, spring: 0, rotationalSpring: 0, rows: [supports.length + 1] };
+    const none = {
+      at,
+      held: false,
+      clamped: false,
+      spring: 0,
+      rotationalSpring: 0,
+      rows: [supports.length + 1],
+    };
     const k = (stiffness / L ** 3) * weight * decades(-1, 3);
     const kr = (stiffness / L) * decades(-2, 2);
     if (kind === 0) supports.push({ ...none, held: true });
@@ -151,7 +167,14 @@ export function randomBeam(seed: number, recipe: Recipe = EVERYTHING): BeamModel
   };
   const size = (): number => sign() * between(0.3, 3);
   const [q0, q1] = stretch();
-  loads.push({ row: 1, case: -1, kind: 'distributed', from: q0, to: q1, law: law((size() * force) / L, false) });
+  loads.push({
+    row: 1,
+    case: -1,
+    kind: 'distributed',
+    from: q0,
+    to: q1,
+    law: law((size() * force) / L, false),
+  });
   for (let i = whole(1, 5); i > 0; i--) {
     const own = { row: loads.length + 1, case: caseOf() };
     const kind = whole(0, 5);
@@ -168,7 +191,8 @@ export function randomBeam(seed: number, recipe: Recipe = EVERYTHING): BeamModel
       if (s.held || s.spring) {
         loads.push({ ...own, kind: 'settlement', at: s.at, displacement: size() * 0.003 * L });
       }
-      if (s.clamped || s.rotationalSpring) loads.push({ ...own, kind: 'rotation', at: s.at, angle: size() * 0.003 });
+      if (s.clamped || s.rotationalSpring)
+        loads.push({ ...own, kind: 'rotation', at: s.at, angle: size() * 0.003 });
     } else if (recipe.camber) {
       const [from, to] = stretch();
       loads.push({ ...own, kind: 'camber', from, to, rise: size() * 0.003 * L });
@@ -208,7 +232,13 @@ const pin = (at: number, row = 1): Support => ({
   rows: [row],
 });
 const constant = (value: number): Law => ({ kind: 'linear', start: value, end: value });
-const plain = (start: number, end: number, supports: Support[], loads: Load[], more: Partial<BeamModel> = {}): BeamModel => ({
+const plain = (
+  start: number,
+  end: number,
+  supports: Support[],
+  loads: Load[],
+  more: Partial<BeamModel> = {},
+): BeamModel => ({
   start,
   end,
   supports,
@@ -255,7 +285,8 @@ export function hardSet(): HardBeam[] {
       law: constant((i + j) % 2 ? 1 : 1e6),
       rows: [1],
     }));
-    const supports = i < 4 ? [{ ...pin(0), clamped: true }, pin(0.55), pin(1)] : [pin(0), pin(0.25), pin(0.9)];
+    const supports =
+      i < 4 ? [{ ...pin(0), clamped: true }, pin(0.55), pin(1)] : [pin(0), pin(0.25), pin(0.9)];
     const loads: Load[] = [
       { ...own, kind: 'distributed', from: 0, to: 1, law: constant(1) },
       { ...own, kind: 'point', at: 0.33, force: 2 },
@@ -270,13 +301,21 @@ export function hardSet(): HardBeam[] {
       { ...own, kind: 'couple', at: 0.2, couple: 0.3 },
     ];
     const rotational = { ...pin(0), rotationalSpring: k };
-    out.push({ group: 'springs 1e±9', name: `two springs ${power}`, model: plain(0, 1, [spring(0), spring(1)], loads) });
+    out.push({
+      group: 'springs 1e±9',
+      name: `two springs ${power}`,
+      model: plain(0, 1, [spring(0), spring(1)], loads),
+    });
     out.push({
       group: 'springs 1e±9',
       name: `spring inside ${power}`,
       model: plain(0, 1, [pin(0), spring(0.4), pin(1)], loads),
     });
-    out.push({ group: 'springs 1e±9', name: `turning base ${power}`, model: plain(0, 1, [rotational], loads) });
+    out.push({
+      group: 'springs 1e±9',
+      name: `turning base ${power}`,
+      model: plain(0, 1, [rotational], loads),
+    });
   }
   {
     const supports = Array.from({ length: 1001 }, (_, i) => pin(i));

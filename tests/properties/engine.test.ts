@@ -21,9 +21,12 @@ test(`${COUNT} random beams from seed ${FIRST}`, () => {
     const factors = COMBINATIONS[i % 3]!;
     const result = compare(model, factors);
     verdicts[result.verdict] = (verdicts[result.verdict] ?? 0) + 1;
-    if (result.verdict.startsWith('only')) bad.push(`seed ${seed}: ${result.verdict} ${JSON.stringify(result.issue)}`);
-    else if (!(result.worst <= 1e-11)) bad.push(`seed ${seed}: ${result.worst.toExponential(2)} ${result.where}`);
-    for (const [name, error] of Object.entries(result.errors)) worst[name] = Math.max(worst[name] ?? 0, error);
+    if (result.verdict.startsWith('only'))
+      bad.push(`seed ${seed}: ${result.verdict} ${JSON.stringify(result.issue)}`);
+    else if (!(result.worst <= 1e-11))
+      bad.push(`seed ${seed}: ${result.worst.toExponential(2)} ${result.where}`);
+    for (const [name, error] of Object.entries(result.errors))
+      worst[name] = Math.max(worst[name] ?? 0, error);
   }
   report(`random beams ${FIRST}..${FIRST + COUNT - 1}`, { ...verdicts, ...worst });
   expect(bad).toEqual([]);
@@ -44,6 +47,8 @@ describe('the hard set', () => {
 });
 
 function report(title: string, figures: Record<string, number>): void {
-  const lines = Object.entries(figures).map(([name, v]) => `  ${name}: ${Number.isInteger(v) ? v : v.toExponential(2)}`);
+  const lines = Object.entries(figures).map(
+    ([name, v]) => `  ${name}: ${Number.isInteger(v) ? v : v.toExponential(2)}`,
+  );
   process.stdout.write(`${title}\n${lines.join('\n')}\n`);
 }

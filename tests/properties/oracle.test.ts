@@ -8,7 +8,14 @@ import { Big, withBits } from '../helpers/oracle-number';
 import { solveOracle } from '../helpers/oracle';
 
 const EPS = 2 ** -52;
-const pin = (at: number): Support => ({ at, held: true, clamped: false, spring: 0, rotationalSpring: 0, rows: [1] });
+const pin = (at: number): Support => ({
+  at,
+  held: true,
+  clamped: false,
+  spring: 0,
+  rotationalSpring: 0,
+  rows: [1],
+});
 const fixed = (at: number): Support => ({ ...pin(at), clamped: true });
 const ei = (from: number, to: number, start: number, end = start): SectionStretch => ({
   from,
@@ -118,7 +125,9 @@ describe('oracle against closed forms', () => {
   test('compressed simple span, uniform load, midspan moment (sec u - 1) w L^2/4u^2 (Timoshenko & Gere)', () => {
     const N = -5;
     const u = Math.sqrt(5) / 2;
-    const o = solveOracle(beam(1, [pin(0), pin(1)], [uniform(0, 1, 1), { ...base, kind: 'axial', force: N }]));
+    const o = solveOracle(
+      beam(1, [pin(0), pin(1)], [uniform(0, 1, 1), { ...base, kind: 'axial', force: N }]),
+    );
     near(o.value('moment', 0.5), (1 / Math.cos(u) - 1) / (4 * u * u), 64);
   });
   test('bowed strut: amplification of a parabola bow under compression', () => {
@@ -126,16 +135,21 @@ describe('oracle against closed forms', () => {
     const p = 4;
     const r = 0.01;
     const o = solveOracle(
-      beam(1, [pin(0), pin(1)], [
-        { ...base, kind: 'axial', force: -p },
-        { ...base, kind: 'camber', from: 0, to: 1, rise: r },
-      ]),
+      beam(
+        1,
+        [pin(0), pin(1)],
+        [
+          { ...base, kind: 'axial', force: -p },
+          { ...base, kind: 'camber', from: 0, to: 1, rise: r },
+        ],
+      ),
     );
     near(o.value('deflection', 0.5), ((-8 * r) / p) * (1 / Math.cos(1) - 1), 64);
   });
   test('the critical load of a simple span is pi^2 EI/L^2, with shear Pe/(1 + Pe/GA) (Engesser)', () => {
     const strut = (force: number, ga: SectionStretch[] = []): boolean =>
-      solveOracle(beam(1, [pin(0), pin(1)], [{ ...base, kind: 'axial', force }, uniform(0, 1, 1)], { ga })).stable;
+      solveOracle(beam(1, [pin(0), pin(1)], [{ ...base, kind: 'axial', force }, uniform(0, 1, 1)], { ga }))
+        .stable;
     const pe = Math.PI ** 2;
     expect(strut(-pe * (1 - 1e-13))).toBe(true);
     expect(strut(-pe * (1 + 1e-13))).toBe(false);
@@ -164,7 +178,9 @@ describe('oracle against closed forms', () => {
     near(sliding.value('moment', 1), 1 / 12);
     const kinked = solveOracle(beam(2, [pin(0), pin(2)], [{ ...base, kind: 'kink', at: 1, angle: -1 }]));
     near(kinked.value('deflection', 1), 0.5);
-    const offset = solveOracle(beam(2, [pin(0), pin(2)], [{ ...base, kind: 'offset', at: 0.5, displacement: 1 }]));
+    const offset = solveOracle(
+      beam(2, [pin(0), pin(2)], [{ ...base, kind: 'offset', at: 0.5, displacement: 1 }]),
+    );
     near(offset.value('deflection', 0.5, 'right') - offset.value('deflection', 0.5, 'left'), 1);
   });
   test('a mechanism has no stable state', () => {

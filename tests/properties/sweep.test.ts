@@ -104,12 +104,19 @@ describe('elastic foundation, simple span, uniform load (Hetenyi, finite hinged 
     const [c, s] = [l.div(2).cosh(), l.div(2).sinh()];
     const [co, si] = [l.div(2).cos(), l.div(2).sin()];
     const sum = l.cosh().plus(l.cos());
-    const model = beam(simple, [uniform], { foundations: [{ from: 0, to: 1, stiffness: 10 ** power, row: 1 }] });
+    const model = beam(simple, [uniform], {
+      foundations: [{ from: 0, to: 1, stiffness: 10 ** power, row: 1 }],
+    });
     const got = answer(model);
     check('foundation deflection', got.deflection, new D(1).minus(c.times(co).times(2).div(sum)).div(k));
     // the moment at midspan fades to nothing on a stiff bed: judged against the largest moment
     const peak = respond(model, null).response!.peak('moment', 'largest').value;
-    const error = Math.abs(new D(got.moment).minus(s.times(si).div(sum).div(l.times(l))).div(peak).toNumber());
+    const error = Math.abs(
+      new D(got.moment)
+        .minus(s.times(si).div(sum).div(l.times(l)))
+        .div(peak)
+        .toNumber(),
+    );
     worst.set('foundation moment', Math.max(worst.get('foundation moment') ?? 0, error));
     expect(error).toBeLessThanOrEqual(BOUND);
   });
@@ -125,8 +132,14 @@ describe('against the oracle, both parameters, with and without shear', () => {
   const ga = [{ from: 0, to: 1, law: constant(30), rows: [1] }];
   const kinds: [string, (p: number) => BeamModel][] = [
     ['tension', (p) => beam(propped, [...loads, { ...own, kind: 'axial', force: 10 ** p }])],
-    ['compression', (p) => beam(propped, [...loads, { ...own, kind: 'axial', force: -Math.min(10 ** p, 14) }])],
-    ['foundation', (p) => beam(propped, loads, { foundations: [{ from: 0, to: 0.8, stiffness: 10 ** p, row: 1 }] })],
+    [
+      'compression',
+      (p) => beam(propped, [...loads, { ...own, kind: 'axial', force: -Math.min(10 ** p, 14) }]),
+    ],
+    [
+      'foundation',
+      (p) => beam(propped, loads, { foundations: [{ from: 0, to: 0.8, stiffness: 10 ** p, row: 1 }] }),
+    ],
     [
       'both, shear-flexible',
       (p) =>

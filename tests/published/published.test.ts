@@ -11,27 +11,34 @@ import { answer, difference, verify } from '../../src/published/verify';
 
 const worst = new Map<string, number>();
 
-describe.each(PUBLISHED_CASES.map((c): [string, PublishedCase] => [`${c.id}: ${c.description}`, c]))('%s', (_, c) => {
-  const tolerance = c.kind ? 1e-11 : 1e-12;
-  test.each(c.asks.map((ask, i): [string, number] => [`${ask.quantity}, ${ask.place ?? ''} [${c.source}; ${c.status}]`, i]))(
-    '%s',
-    (__, i) => {
+describe.each(PUBLISHED_CASES.map((c): [string, PublishedCase] => [`${c.id}: ${c.description}`, c]))(
+  '%s',
+  (_, c) => {
+    const tolerance = c.kind ? 1e-11 : 1e-12;
+    test.each(
+      c.asks.map((ask, i): [string, number] => [
+        `${ask.quantity}, ${ask.place ?? ''} [${c.source}; ${c.status}]`,
+        i,
+      ]),
+    )('%s', (__, i) => {
       const ask = c.asks[i]!;
       const computed = answer(openBeam({ beam: rowsOf(c) }), ask);
       const error = difference(computed, ask);
       const group = c.kind ?? 'closed form';
       worst.set(group, Math.max(worst.get(group) ?? 0, error));
-      expect(`${computed} differs by ${error <= tolerance ? 'no more than allowed' : error} from ${ask.value}`).toMatch(
-        /no more than allowed/,
-      );
+      expect(
+        `${computed} differs by ${error <= tolerance ? 'no more than allowed' : error} from ${ask.value}`,
+      ).toMatch(/no more than allowed/);
       if (ask.printed !== undefined && /^[-+]?[\d.]+$/.test(ask.printed)) {
         // the digits the source prints: equal when rounded to as many places (problems print magnitudes for some couples)
         const places = (ask.printed.split('.')[1] ?? '').length;
-        expect(Math.abs(Number(Math.abs(computed).toFixed(places)) - Math.abs(Number(ask.printed)))).toBeLessThan(1e-9);
+        expect(
+          Math.abs(Number(Math.abs(computed).toFixed(places)) - Math.abs(Number(ask.printed))),
+        ).toBeLessThan(1e-9);
       }
-    },
-  );
-});
+    });
+  },
+);
 
 test('the reading of the case data: 148.6e6 mm4 lands as a value and a unit', () => {
   const first = PUBLISHED_CASES.find((c) => c.id === 'SS-01')!;
