@@ -61,7 +61,7 @@ const config = { number: 'number', predictable: false, relTol: 1e-12, absTol: 1e
 export function makeParser(classes: NodeClasses): (text: string) => object {
   // `typed` dispatches on the argument's type at run time; here the argument is always one text.
   const typed = Object.assign(
-    (_name: string, signatures: { string(text: string): object }) => signatures.string,
+    (_name: string, signatures: { readonly string: (text: string) => object }) => signatures.string,
     { addConversion: () => undefined },
   );
   return createParse({ ...classes, typed, config, numeric: (text: string) => Number(text) });

@@ -25,7 +25,7 @@ export function power(a: Ratio, k: number): Ratio {
 export function decimal(text: string): Ratio {
   const [, sign, whole = '', part = '', exponent = '0'] =
     /^([+-]?)(\d*)\.?(\d*)(?:[eE]([+-]?\d+))?$/.exec(text) ?? [];
-  const digits = BigInt((whole + part || '0') as string);
+  const digits = BigInt(whole + part || '0');
   const shift = Number(exponent) - part.length;
   const n = sign === '-' ? -digits : digits;
   return shift >= 0 ? { n: n * 10n ** BigInt(shift), d: 1n } : { n, d: 10n ** BigInt(-shift) };

@@ -26,6 +26,9 @@ export function readTextRows(text: string): TextRows {
   return { rows, issues };
 }
 
+/** A remark may hold a quotation mark that never closes; it must not swallow the rows after it. */
+const REMARK = /^\s*(?:#|\/\/)/;
+
 /** A separator inside quotes separates nothing. Quotes only open where a cell begins, so the inch mark of 12'-6" opens none. */
 function splitRows(text: string): string[] {
   const rows: string[] = [];
@@ -42,7 +45,7 @@ function splitRows(text: string): string[] {
         }
         quoted = false;
       }
-    } else if (isQuote(sign) && /(?:^|[\s=])$/.test(row)) {
+    } else if (isQuote(sign) && /(?:^|[\s=])$/.test(row) && !REMARK.test(row)) {
       quoted = true;
     } else if (sign === ';' || sign === '\n' || sign === '\r') {
       if (!(sign === '\n' && text[i - 1] === '\r')) rows.push(row);
@@ -103,8 +106,7 @@ function closing(line: string, from: number): number {
 }
 
 function readRow(line: string, row: number, issues: Issue[]): TextRow {
-  const remark = line.trim();
-  if (remark.startsWith('#') || remark.startsWith('//')) return { Item: remark };
+  if (REMARK.test(line)) return { Item: line.trim() };
   let parts = tokens(line, row, issues);
   // "rotational spring", "shear release" and "point load" are one cell even without quotes.
   const [first, second] = parts;
