@@ -11,7 +11,7 @@ import path from 'node:path';
 import { chromium, type Browser, type BrowserContextOptions, type Page } from 'playwright-core';
 
 /** The folder that `npm run build` writes. */
-export const DIST = path.resolve(__dirname, '../../dist');
+export const DIST = process.env.SPANROW_DIST ?? path.resolve(__dirname, '../../dist');
 
 const CANDIDATES = [
   process.env.CHROMIUM ?? process.env.CHROMIUM_PATH ?? '',
