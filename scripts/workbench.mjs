@@ -6,9 +6,11 @@ import path from 'node:path';
 const require = createRequire(import.meta.url);
 const { ensureInstalled, root, runTool } = require('./machine.cjs');
 
-const HEADLESS = path.join(root, 'dist/node/headless.js');
-const FUNCTIONS = path.join(root, 'dist/functions.js');
-const METADATA = path.join(root, 'dist/functions.json');
+/** SPANROW_DIST names another build than the repository's own. */
+const DIST = process.env.SPANROW_DIST ?? path.join(root, 'dist');
+const HEADLESS = path.join(DIST, 'node/headless.js');
+const FUNCTIONS = path.join(DIST, 'functions.js');
+const METADATA = path.join(DIST, 'functions.json');
 
 export function loadWorkbench() {
   if (![HEADLESS, FUNCTIONS, METADATA].every((file) => existsSync(file))) {

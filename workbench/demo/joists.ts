@@ -35,7 +35,7 @@ export function templateSheet(): Paper {
     'One set of rows for every joist of the schedule. The names get their values there.',
   );
   paper.line(4, 1, ['Beam rows', ...Array<Put>(7).fill(null)], 'section');
-  paper.line(FIRST_ROW, 1, HEADER, 'head');
+  paper.line(FIRST_ROW, 1, HEADER, 'columns');
   TEMPLATE_ROWS.forEach((cells, index) => {
     HEADER.forEach((_, column) => {
       const value = cells[column] ?? null;
@@ -127,7 +127,7 @@ export function scheduleSheet(): Paper {
   const paper = new Paper(
     'joist-schedule',
     SCHEDULE_SHEET,
-    [18, 50, 70, 78, 46, 46, 52, 52, 44, 62, 44, 44, 64, 56, 56, 70, 78],
+    [18, 50, 70, 78, 46, 46, 52, 52, 44, 62, 44, 44, 64, 56, 52, 78, 78],
     { rows: SCHEDULE_HEADER_ROW + 1, columns: 0 },
   );
   titleBlock(
