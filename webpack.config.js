@@ -6,7 +6,6 @@
  *   npm run build -- --env origin=https://host/path    addresses of that place in the manifest and the help links
  *   npm run build -- --env only=addin                  without the workbench, quicker
  */
-const fs = require('node:fs');
 const path = require('node:path');
 const CopyPlugin = require('copy-webpack-plugin');
 const MetadataPlugin = require('custom-functions-metadata-plugin');
@@ -53,15 +52,9 @@ const common = {
 };
 
 function addin(origin) {
-  const paneStands = fs.existsSync(path.join(root, 'taskpane/pane.ts'));
   return {
     ...common,
-    resolve: {
-      ...common.resolve,
-      alias: paneStands ? {} : { [path.join(root, 'taskpane/pane')]: false },
-    },
     name: 'addin',
-    cache: { ...common.cache, name: 'addin' },
     entry: {
       functions: { import: functionFiles },
       // the pane stands on the same engine and the same memo as the functions, so it is not downloaded twice
@@ -93,6 +86,7 @@ function addin(origin) {
       new HelpPlugin({ root }),
       new AddressPlugin({ from: LOCAL_ORIGIN, to: origin }),
       new SizePlugin({ file: 'functions.js', budget: 130_000 }),
+      new SizePlugin({ file: 'pane.js', budget: 60_000 }),
     ],
   };
 }
