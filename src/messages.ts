@@ -239,9 +239,14 @@ const SENTENCES: Readonly<Record<string, Sentence>> = {
 
   // Solving
   unstable: (i) => {
-    const turn = i.detail?.motion === 'rotate';
-    const about = i.detail?.about === undefined ? '' : ` about x = ${detail(i, 'about')}`;
-    return `The beam is not held: from x = ${detail(i, 'from')} to ${detail(i, 'to')} it is free to ${turn ? `rotate${about}` : 'move up and down'}. Add a support or remove a hinge.`;
+    const motions: Record<string, string> = {
+      rotate: `free to rotate${i.detail?.about === undefined ? '' : ` about x = ${detail(i, 'about')}`}`,
+      translate: 'free to move up and down',
+      fold: 'free to fold at its releases',
+      any: 'held by nothing',
+    };
+    const motion = motions[String(i.detail?.motion)] ?? 'free to move';
+    return `The beam is not held: from x = ${detail(i, 'from')} to ${detail(i, 'to')} it is ${motion}. Add a support or remove a release.`;
   },
   'past-critical-load': (i) =>
     `The compression ${detail(i, 'applied')} is at or past the critical load ${detail(i, 'critical')}: the beam buckles. Expected a smaller axial force.`,

@@ -50,9 +50,12 @@ export function findMechanism(model: BeamModel): Issue | null {
   let t = 0;
   let x = model.start;
   let since = model.start;
+  /** a release has been passed inside the part that moves: its pieces turn against each other */
+  let folds = false;
   const moving = (to: number): Issue => {
     const detail: Record<string, string | number> = { from: since, to };
-    if (dimension === 2) detail.motion = 'any';
+    if (folds) detail.motion = 'fold';
+    else if (dimension === 2) detail.motion = 'any';
     else if (t === 0) detail.motion = 'translate';
     else {
       detail.motion = 'rotate';
@@ -94,21 +97,27 @@ export function findMechanism(model: BeamModel): Issue | null {
     for (const e of here) {
       if (e.kind === 'hinge') {
         if (dimension === 2 || (dimension === 1 && v === 0)) return moving(at);
-        if (dimension === 1) dimension = 2;
-        else {
+        if (dimension === 1) {
+          dimension = 2;
+          folds = true;
+        } else {
           dimension = 1;
           v = 0;
           t = 1;
           since = at;
+          folds = false;
         }
       } else if (e.kind === 'slide') {
         if (dimension === 2 || (dimension === 1 && t === 0)) return moving(at);
-        if (dimension === 1) dimension = 2;
-        else {
+        if (dimension === 1) {
+          dimension = 2;
+          folds = true;
+        } else {
           dimension = 1;
           v = 1;
           t = 0;
           since = at;
+          folds = false;
         }
       }
     }
