@@ -20,14 +20,13 @@ export type Carried =
   | { readonly kind: 'number' }
   /** made of plain numbers from `values` or of x */
   | { readonly kind: 'plain' }
-  /** made of plain numbers and of values with units */
-  | { readonly kind: 'mixed' }
+  /** plain numbers times values with units; the dimension is that of the latter */
+  | { readonly kind: 'mixed'; readonly dimension: Dimension }
   /** all units known */
   | { readonly kind: 'known'; readonly dimension: Dimension };
 
 export const NUMBER: Carried = { kind: 'number' };
 export const PLAIN: Carried = { kind: 'plain' };
-const MIXED: Carried = { kind: 'mixed' };
 
 /** null: two different dimensions are added or compared. */
 export function carry(node: Node, of: (name: string) => Carried): Carried | null {
@@ -69,7 +68,7 @@ function carryFunction(node: FunctionNode, of: (name: string) => Carried): Carri
   }
   if (node.name === 'sqrt') {
     const [a] = parts;
-    return a!.kind === 'known' ? known(scaled(a!.dimension, 0.5)) : a!;
+    return raisedTo(a!, 0.5);
   }
   return parts.some((part) => part.kind === 'plain' || part.kind === 'mixed') ? PLAIN : NUMBER;
 }
@@ -78,29 +77,45 @@ function sum(a: Carried, b: Carried): Carried | null {
   if (a.kind === 'known' && b.kind === 'known') return same(a.dimension, b.dimension) ? a : null;
   if (a.kind === 'known') return a;
   if (b.kind === 'known') return b;
-  if (a.kind === 'mixed' || b.kind === 'mixed') return MIXED;
+  if (a.kind === 'mixed') return a;
+  if (b.kind === 'mixed') return b;
   return a.kind === 'plain' ? a : b;
 }
 
 function product(a: Carried, b: Carried, sign: 1 | -1): Carried {
-  if (a.kind === 'known' && b.kind === 'known') {
-    return known({
-      force: a.dimension.force + sign * b.dimension.force,
-      length: a.dimension.length + sign * b.dimension.length,
-      angle: a.dimension.angle + sign * b.dimension.angle,
-    });
-  }
-  if (a.kind === 'number') return b.kind === 'known' ? known(scaled(b.dimension, sign)) : b;
-  if (b.kind === 'number') return a;
-  return a.kind === 'plain' && b.kind === 'plain' ? PLAIN : MIXED;
+  const plain = a.kind === 'plain' || a.kind === 'mixed' || b.kind === 'plain' || b.kind === 'mixed';
+  const [p, q] = [dimensionOf(a), dimensionOf(b)];
+  return made(plain, {
+    force: p.force + sign * q.force,
+    length: p.length + sign * q.length,
+    angle: p.angle + sign * q.angle,
+  });
 }
 
 function raised(a: Carried, exponent: Node): Carried {
-  if (a.kind !== 'known') return a;
+  if (a.kind === 'number' || a.kind === 'plain') return a;
   const bare = exponent instanceof ParenthesisNode ? exponent.content : exponent;
   const turned = bare instanceof OperatorNode && bare.fn === 'unaryMinus' ? bare.args[0] : bare;
-  if (!(turned instanceof ConstantNode)) return MIXED;
-  return known(scaled(a.dimension, turned === bare ? turned.value : -turned.value));
+  // A power that is not written as a number leaves the dimension open, as a plain factor would.
+  if (!(turned instanceof ConstantNode)) return { kind: 'mixed', dimension: a.dimension };
+  return raisedTo(a, turned === bare ? turned.value : -turned.value);
+}
+
+function raisedTo(a: Carried, k: number): Carried {
+  return a.kind === 'known' || a.kind === 'mixed' ? made(a.kind === 'mixed', scaled(a.dimension, k)) : a;
+}
+
+const NONE: Dimension = { force: 0, length: 0, angle: 0 };
+
+function dimensionOf(a: Carried): Dimension {
+  return a.kind === 'known' || a.kind === 'mixed' ? a.dimension : NONE;
+}
+
+/** Units that cancel leave a mere number. */
+function made(plain: boolean, dimension: Dimension): Carried {
+  const { force, length, angle } = dimension;
+  if (force === 0 && length === 0 && angle === 0) return plain ? PLAIN : NUMBER;
+  return plain ? { kind: 'mixed', dimension } : { kind: 'known', dimension };
 }
 
 function scaled(d: Dimension, k: number): Dimension {
@@ -109,10 +124,4 @@ function scaled(d: Dimension, k: number): Dimension {
 
 function same(a: Dimension, b: Dimension): boolean {
   return a.force === b.force && a.length === b.length && a.angle === b.angle;
-}
-
-/** Units that cancel leave a mere number. */
-function known(dimension: Dimension): Carried {
-  const { force, length, angle } = dimension;
-  return force === 0 && length === 0 && angle === 0 ? NUMBER : { kind: 'known', dimension };
 }

@@ -31,14 +31,17 @@ function change(a: string, b: string): number {
   return a.toLowerCase() === b.toLowerCase() ? OTHER_CASE : 1;
 }
 
-/** The nearest of the candidates, if it is near enough to be worth saying: a third of its letters may be wrong, at least one. */
+/**
+ * The nearest of the candidates, if it is near enough to be worth saying: a third of its letters may be wrong, at
+ * least one; of a single letter only its size.
+ */
 export function nearest(word: string, candidates: Iterable<string>): string | undefined {
   if (word.length > 60) return undefined;
   let best: string | undefined;
   let least = Infinity;
   for (const candidate of candidates) {
     const allowed =
-      word.length <= 2 ? 0.5 : Math.max(1, Math.floor(Math.min(word.length, candidate.length) / 3)) + 0.5;
+      word.length < 2 ? 0.5 : Math.max(1, Math.floor(Math.min(word.length, candidate.length) / 3)) + 0.5;
     const d = editDistance(word, candidate, Math.min(allowed, least));
     if (d <= allowed && d < least && candidate !== word) {
       best = candidate;
