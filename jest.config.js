@@ -14,7 +14,11 @@ module.exports = {
     project('published'),
     project('properties'),
     project('functions'),
-    project('taskpane', { testEnvironment: 'jsdom' }),
+    project('taskpane', {
+      testEnvironment: 'jsdom',
+      // styles are the browser tests' business
+      moduleNameMapper: { '\\.css$': '<rootDir>/tests/helpers/no-styles.cjs' },
+    }),
     project('workbench'),
     project('browser'),
   ],

@@ -10,8 +10,9 @@ const MATHML = 'http://www.w3.org/1998/Math/MathML';
 function append(parent: Element, children: readonly Child[]): void {
   for (const child of children) {
     if (child === null || child === undefined || child === false) continue;
-    if (Array.isArray(child)) append(parent, child as readonly Child[]);
-    else parent.append(child instanceof Node ? child : String(child as string | number));
+    if (child instanceof Node) parent.append(child);
+    else if (typeof child === 'object') append(parent, child);
+    else parent.append(String(child));
   }
 }
 
@@ -40,7 +41,7 @@ export function svg<K extends keyof SVGElementTagNameMap>(
   attributes: Attributes | null = null,
   ...children: readonly Child[]
 ): SVGElementTagNameMap[K] {
-  const element = document.createElementNS(SVG, tag) as SVGElementTagNameMap[K];
+  const element = document.createElementNS<K>(SVG, tag);
   fill(element, attributes, children);
   return element;
 }

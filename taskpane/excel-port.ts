@@ -48,8 +48,6 @@ function runAsOneStep<T>(work: (context: Excel.RequestContext) => Promise<T>): P
   return Excel.run(options, work);
 }
 
-const SHAPE = 'rowIndex, columnIndex, rowCount, columnCount';
-
 function areaOf(range: Excel.Range, sheet: string): Area {
   return {
     sheet,
@@ -60,6 +58,12 @@ function areaOf(range: Excel.Range, sheet: string): Area {
   };
 }
 
+/** "'Roof beams'!B4:I11" -> "Roof beams" */
+export function sheetOf(address: string): string {
+  const sheet = address.slice(0, Math.max(0, address.lastIndexOf('!')));
+  return sheet.startsWith("'") ? sheet.slice(1, -1).replace(/''/g, "'") : sheet;
+}
+
 function rangeOf(context: Excel.RequestContext, area: Area): Excel.Range {
   return context.workbook.worksheets
     .getItem(area.sheet)
@@ -68,17 +72,18 @@ function rangeOf(context: Excel.RequestContext, area: Area): Excel.Range {
 
 async function selectionNow(context: Excel.RequestContext): Promise<Selection | null> {
   const range = context.workbook.getSelectedRange();
-  range.load(SHAPE);
-  range.worksheet.load('name');
+  range.load('rowIndex, columnIndex, rowCount, columnCount');
+  // what is selected is always on the active sheet
+  const sheet = context.workbook.worksheets.getActiveWorksheet();
+  sheet.load('name');
   const cell = supports('1.7') ? context.workbook.getActiveCell() : range.getCell(0, 0);
-  cell.load(SHAPE);
+  cell.load('rowIndex, columnIndex, rowCount, columnCount');
   try {
     await context.sync();
   } catch {
     return null; // several separate ranges, or a chart, are selected
   }
-  const sheet = range.worksheet.name;
-  return { area: areaOf(range, sheet), active: areaOf(cell, sheet) };
+  return { area: areaOf(range, sheet.name), active: areaOf(cell, sheet.name) };
 }
 
 /** The used part of each area, values and formulas; null where there is no such sheet or nothing used. */
@@ -93,7 +98,7 @@ async function readBlocks(context: Excel.RequestContext, areas: readonly Area[])
     const range = sheet
       .getRangeByIndexes(area.row, area.column, area.rows, area.columns)
       .getUsedRangeOrNullObject(true);
-    range.load(`values, formulas, ${SHAPE}`);
+    range.load('values, formulas, rowIndex, columnIndex, rowCount, columnCount');
     return range;
   });
   await context.sync();
@@ -125,6 +130,7 @@ async function write(writings: readonly Writing[], options: WriteOptions = {}): 
     if (!options.confirmed) {
       const active = context.workbook.worksheets.getActiveWorksheet();
       active.load('name');
+      await context.sync();
       const blocks = await readBlocks(
         context,
         writings.map((writing) => writing.area),
@@ -158,10 +164,9 @@ async function nameMeaning(
   if (!item) return null;
   if (item.type === Excel.NamedItemType.range) {
     const range = item.getRangeOrNullObject();
-    range.load(SHAPE);
-    range.worksheet.load('name');
+    range.load('address, rowIndex, columnIndex, rowCount, columnCount');
     await context.sync();
-    if (!range.isNullObject) return { kind: 'area', area: areaOf(range, range.worksheet.name) };
+    if (!range.isNullObject) return { kind: 'area', area: areaOf(range, sheetOf(range.address)) };
   }
   const formula: unknown = item.formula;
   if (typeof formula === 'string' && /[A-Za-z(]/.test(formula)) return { kind: 'formula', formula };
@@ -174,16 +179,18 @@ async function tableInfo(context: Excel.RequestContext, name: string): Promise<T
   await context.sync();
   if (table.isNullObject) return null;
   const range = table.getRange();
-  range.load(SHAPE);
-  table.worksheet.load('name');
-  table.columns.load('items/name');
+  range.load('rowIndex, columnIndex, rowCount, columnCount');
+  const sheet = table.worksheet;
+  sheet.load('name');
+  const { columns } = table;
+  columns.load('items/name');
   await context.sync();
   return {
     name: table.name,
-    area: areaOf(range, table.worksheet.name),
+    area: areaOf(range, sheet.name),
     header: table.showHeaders,
     totals: table.showTotals,
-    columns: table.columns.items.map((column) => column.name),
+    columns: columns.items.map((column) => column.name),
   };
 }
 
@@ -314,7 +321,7 @@ export function createExcelPort(): WorkbookPort {
         await context.sync();
         if (sheet.isNullObject) return null;
         const range = sheet.getUsedRangeOrNullObject(true);
-        range.load(SHAPE);
+        range.load('rowIndex, columnIndex, rowCount, columnCount');
         await context.sync();
         return range.isNullObject ? null : areaOf(range, sheet.name);
       }),
@@ -325,7 +332,7 @@ export function createExcelPort(): WorkbookPort {
       supports('1.12')
         ? run(async (context) => {
             const range = rangeOf(context, cell).getSpillingToRangeOrNullObject();
-            range.load(SHAPE);
+            range.load('rowIndex, columnIndex, rowCount, columnCount');
             await context.sync();
             return range.isNullObject ? null : areaOf(range, cell.sheet);
           })

@@ -147,7 +147,7 @@ export class Follower {
           },
           x: x ? x.values.flat() : [],
           limit: value(limit),
-          quantity: quantity ? String(value(quantity) as string) : ownQuantity(call.fn),
+          quantity: quantity ? String(value(quantity)) : ownQuantity(call.fn),
           read: place.read,
         },
       };

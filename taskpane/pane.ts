@@ -215,7 +215,7 @@ class Pane {
       kept: this.kept,
       home: this.selection?.active.sheet ?? null,
     });
-    this.messages.show(reviewed, lost);
+    this.messages.show(reviewed, lost, tab === 'rows');
     const beam = reviewed !== null;
     this.drawing.show(
       beam && tab !== 'place' && tab !== 'working' ? reviewed.drawing : null,
@@ -255,7 +255,7 @@ class Pane {
     const heading = draft.head > 0 ? (reviewed.subject.cells[0] ?? null) : null;
     const next = reviewCells(reviewed.subject, toCells(draft, heading));
     this.rows.say(next);
-    this.messages.show(next, null);
+    this.messages.show(next, null, this.settings.tab === 'rows');
     if (next.drawing) this.drawing.show(next.drawing, this.separators, this.settings.tab === 'rows');
   }
 

@@ -7,6 +7,7 @@ import {
   say,
   spansOf,
   type BeamModel,
+  type ColumnName,
   type Issue,
   type OpenBeam,
   type Response,
@@ -14,6 +15,7 @@ import {
 } from './engine';
 import type { DrawingInput, LimitLine } from './drawing/frame';
 import type { Subject } from './follow';
+import { texts } from './texts';
 
 export interface Reviewed {
   readonly subject: Subject;
@@ -28,6 +30,8 @@ export interface Reviewed {
   readonly checks: readonly Check[];
   /** positions the formula asks at */
   readonly marks: readonly number[];
+  /** what a sketch had to leave out because of errors, in words; empty when the whole beam is drawn */
+  readonly without: string;
 }
 
 /** One line of CHECK, in the reader's units. */
@@ -106,6 +110,7 @@ export function reviewCells(subject: Subject, cells: readonly (readonly unknown[
     issues.push(...found.issues);
   }
   const marks = model ? marksOf(subject, model) : [];
+  const sketch = model ? null : sketchOf(subject, cells, review);
   const byRow = new Map<number, string[]>();
   const note = (issue: Issue): void => {
     if (issue.row === undefined) return;
@@ -123,10 +128,67 @@ export function reviewCells(subject: Subject, cells: readonly (readonly unknown[
     byRow,
     open,
     model,
-    drawing: model ? drawingOf(review, model, open, marks, limitLines(model, checks)) : null,
+    drawing: model
+      ? drawingOf(review, model, open, marks, limitLines(model, checks))
+      : (sketch?.drawing ?? null),
     checks,
     marks,
+    without: sketch?.without ?? '',
   };
+}
+
+/**
+ * A picture of rows that are not in order yet: the same beam without the rows in error, and with some stiffness if it has none.
+ * Only drawn, never answered.
+ */
+function sketchOf(
+  subject: Subject,
+  cells: readonly (readonly unknown[])[],
+  review: Review,
+): { drawing: DrawingInput; without: string } | null {
+  if (cells.length < 2) return null;
+  const { columns, header } = review.table.layout;
+  const bad = new Set<number>();
+  const blank = (row: number): void => {
+    if (row > (header ? 1 : 0)) bad.add(row);
+  };
+  let stiff = false;
+  let now = review;
+  // rows left out still say how far the beam reaches: a load of nothing stands for them
+  const named = review.table.rows
+    .filter((row) => row.kind === 'item' || row.kind === 'unknown')
+    .flatMap((row) => [row.cells.At, row.cells.To])
+    .filter((cell): cell is number => typeof cell === 'number');
+  const reach = [Math.min(...named), Math.max(...named)] as const;
+  for (let attempt = 0; attempt < 4; attempt++) {
+    const blamed = now.issues.flatMap((issue) => (issue.row === undefined ? [] : [issue.row]));
+    const before = bad.size;
+    blamed.forEach(blank);
+    if (bad.size === before) {
+      if (stiff) return null;
+      // nothing left to blame but what is missing: the stiffness
+      stiff = true;
+      for (const row of now.table.rows) if (/^(E|I|EI)$/.test(row.item ?? '')) blank(row.row);
+    }
+    const kept = cells.map((row, i) => (bad.has(i + 1) ? row.map(() => null) : row));
+    const units = now.table.rows.find((row) => row.item === 'units')?.cells;
+    const word = (cell: unknown): string => (typeof cell === 'string' ? cell : '');
+    const unit = units ? `${word(units.At)}*${word(units.To)}^2` : null;
+    const line = (values: Partial<Record<ColumnName, unknown>>): unknown[] =>
+      columns.map((name) => (name === null ? null : (values[name] ?? null)));
+    const extra = [line({ Item: 'uniform', At: reach[0], To: reach[1], Value: 0 })];
+    if (stiff) extra.push(line({ Item: 'EI', Value: 1, Unit: unit }));
+    now = reviewBeam({ ...subject.args, beam: reach[1] > reach[0] ? [...kept, ...extra] : kept });
+    if (!now.model) continue;
+    const model = { ...now.model, loads: now.model.loads.filter((load) => load.row <= cells.length) };
+    const rows = [...bad].sort((a, b) => a - b);
+    const parts: string[] = [];
+    if (rows.length > 0) parts.push(texts.messages.sketchRows(rows));
+    if (stiff) parts.push(texts.messages.sketchStiffness);
+    const drawing = drawingOf(now, model, null, [], []);
+    return { drawing, without: texts.messages.sketch(parts.join(', ')) };
+  }
+  return null;
 }
 
 function drawingOf(

@@ -4,7 +4,7 @@ import { svg } from '../dom';
 import { formatNumber } from '../numbers';
 import { texts } from '../texts';
 import { curvePath } from './curve';
-import { Placer, textWidth, type Box } from './labels';
+import { Placer, textWidth, type Box, type Ink } from './labels';
 import { stations } from './beam';
 import {
   path,
@@ -12,7 +12,6 @@ import {
   SMALL,
   TEXT,
   unitOf,
-  withUnit,
   type DrawingInput,
   type DrawingOptions,
   type Frame,
@@ -24,6 +23,8 @@ const LARGE_HEIGHT = 150;
 const CAPTION = 17;
 /** room for a label outside the highest and lowest point */
 const PAD = 17;
+/** zero crossings closer together than this on average say nothing at this size */
+const ZERO_PITCH = 24;
 /** local extremes smaller than this part of the largest are not labelled */
 const WORTH = 0.04;
 /** a limit further away than this many times the deflection would flatten the curve: it is stated, not drawn */
@@ -63,9 +64,11 @@ function labelled(quantity: Quantity, input: DrawingInput, response: Response): 
     main,
   });
   const points: Point[] = [];
+  const length = input.model.end - input.model.start;
+  const same = (a: Point, b: Point): boolean =>
+    Math.abs(a.at - b.at) < 1e-6 * length && Math.abs(a.shown - b.shown) <= 1e-6 * Math.abs(b.shown);
   const add = (next: Point): void => {
-    if (next.shown !== 0 && !points.some((known) => known.at === next.at && known.shown === next.shown))
-      points.push(next);
+    if (next.shown !== 0 && !points.some((known) => same(known, next))) points.push(next);
   };
   const highest = point(response.peak(quantity, 'highest'), true);
   const lowest = point(response.peak(quantity, 'lowest'), true);
@@ -159,6 +162,7 @@ export function drawDiagram(
   }
 
   const placer = new Placer(2, options.width - 2);
+  placer.keepOff(ink(response, quantity, input, frame, y, lines));
   placer.take({ left: 0, top: 0, width: textWidth(caption.textContent, TEXT) + 6, height: CAPTION - 2 });
   labelPeaks(group, placer, points, quantity, options, frame, y, zero, sign, total);
   if (quantity === 'moment' || quantity === 'shear') {
@@ -167,6 +171,35 @@ export function drawDiagram(
   const perUnit = (frame.right - frame.left) / (model.end - model.start);
   const exaggeration = quantity === 'deflection' && scale > 0 ? (scale * Math.abs(factor)) / perUnit : null;
   return { quantity, group, height: total, zero, y, reading, exaggeration };
+}
+
+/** Where the curve and the limit lines run, pixel by pixel, so that labels keep off them. */
+function ink(
+  response: Response,
+  quantity: Quantity,
+  input: DrawingInput,
+  frame: Frame,
+  y: (shown: number) => number,
+  lines: readonly DrawnLimit[],
+): Ink {
+  const from = Math.floor(frame.left);
+  const count = Math.ceil(frame.right) - from + 1;
+  const curve: number[] = [];
+  const { start, end } = input.model;
+  for (let i = 0; i < count; i++) {
+    const x = Math.min(end, Math.max(start, frame.x.invert(from + i)));
+    curve.push(y(input.show(quantity, response.value(quantity, x, 'right'))));
+  }
+  return {
+    from,
+    curve,
+    lines: lines.map((line) => ({
+      x0: frame.x(line.from),
+      x1: frame.x(line.to),
+      y0: y(line.start),
+      y1: y(line.end),
+    })),
+  };
 }
 
 interface DrawnLimit {
@@ -228,36 +261,46 @@ function labelPeaks(
     const outward = sign * point.shown > 0 ? 1 : -1;
     const full = texts.drawing.valueAt(number(point.shown, 4), number(point.at, 4));
     const choices = point.main ? [full, number(point.shown, 4)] : [number(point.shown, 3)];
-    let done = false;
-    for (const words of choices) {
-      const width = textWidth(words, point.main ? TEXT : SMALL);
-      const size = point.main ? TEXT : SMALL;
-      const out = outward > 0 ? at + 4 : at - 4 - size;
+    const size = point.main ? TEXT : SMALL;
+    const wishes = (words: string): Box[] => {
+      const width = textWidth(words, size);
       const box = (left: number, top: number): Box => ({ left, top, width, height: size + 1 });
-      const wishes = [
+      const out = outward > 0 ? at + 4 : at - 4 - size;
+      const all = [
         box(x - width / 2, out),
         box(x + 5, out),
         box(x - width - 5, out),
         box(x + 5, at - size / 2),
         box(x - width - 5, at - size / 2),
-      ].filter((wish) => wish.top >= CAPTION - 4 && wish.top + wish.height <= total + 1);
-      const place = placer.first(wishes);
-      if (!place) continue;
+      ];
+      if (point.main) {
+        const inward = outward > 0 ? at - 6 - size : at + 6;
+        all.push(box(x - width / 2, inward), box(x + 9, inward), box(x - width - 9, inward));
+      }
+      return all.filter((wish) => wish.top >= CAPTION - 4 && wish.top + wish.height <= total + 1);
+    };
+    let place: Box | null = null;
+    let words = '';
+    for (words of choices) if ((place = placer.clear(wishes(words)))) break;
+    // the two values that matter most are labelled even where their text must cross the curve
+    if (!place && point.main) {
+      for (words of choices) if ((place = placer.first(wishes(words)))) break;
+    }
+    if (place) {
       group.append(
         svg(
           'text',
           {
             class: point.main ? 'sp-peak' : 'sp-peak sp-peak-local',
-            x: px(place.left + width / 2),
+            x: px(place.left + place.width / 2),
             y: px(place.top + size - 1),
             'text-anchor': 'middle',
           },
           words,
         ),
       );
-      done = true;
-      break;
     }
+    const done = place !== null;
     if (done || point.main)
       group.append(svg('circle', { class: 'sp-peak-dot', cx: px(x), cy: px(at), r: point.main ? 2.6 : 1.8 }));
   }
@@ -289,15 +332,16 @@ function labelZeros(
   const { model } = input;
   const length = model.end - model.start;
   const known = stations(model);
-  for (const at of zeros) {
-    // a zero at a pin or a free end is there by definition
-    if (known.some((mark) => Math.abs(mark - at) < 1e-6 * length)) continue;
+  // a zero at a pin or a free end is there by definition
+  const between = zeros.filter((at) => !known.some((mark) => Math.abs(mark - at) < 1e-6 * length));
+  if (between.length > (frame.right - frame.left) / ZERO_PITCH) return;
+  for (const at of between) {
     const x = frame.x(at);
     const words = formatNumber(at, options.separators, 3);
     const width = textWidth(words, SMALL);
     const box = (left: number, top: number): Box => ({ left, top, width, height: SMALL });
     group.append(svg('circle', { class: 'sp-crossing', cx: px(x), cy: px(zero), r: 2.2 }));
-    const place = placer.first([
+    const place = placer.clear([
       box(x + 4, zero - SMALL - 2),
       box(x - width - 4, zero - SMALL - 2),
       box(x + 4, zero + 3),

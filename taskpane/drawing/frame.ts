@@ -1,5 +1,4 @@
 /** What a drawing is made of: the input, the common horizontal axis, and a few helpers for paths. */
-import { scaleLinear, type ScaleLinear } from 'd3-scale';
 import type { BeamModel, Quantity, Response } from '../engine';
 import type { Separators } from '../port';
 
@@ -53,9 +52,21 @@ export const SMALL = 10;
 /** room at both ends for a built-in end and half a label */
 export const MARGIN = 24;
 
+/** Position along the beam -> pixel, and back. */
+export interface Scale {
+  (at: number): number;
+  invert(pixel: number): number;
+}
+
+function linearScale(from: number, to: number, left: number, right: number): Scale {
+  const perUnit = (right - left) / (to - from);
+  const scale = (at: number): number => left + (at - from) * perUnit;
+  return Object.assign(scale, { invert: (pixel: number) => from + (pixel - left) / perUnit });
+}
+
 export interface Frame {
   readonly width: number;
-  readonly x: ScaleLinear<number, number>;
+  readonly x: Scale;
   readonly left: number;
   readonly right: number;
 }
@@ -63,7 +74,7 @@ export interface Frame {
 export function makeFrame(model: BeamModel, width: number): Frame {
   const left = MARGIN;
   const right = Math.max(left + 60, width - MARGIN);
-  return { width, left, right, x: scaleLinear([model.start, model.end], [left, right]) };
+  return { width, left, right, x: linearScale(model.start, model.end, left, right) };
 }
 
 /** One decimal of a pixel is enough, and keeps golden files steady. */

@@ -65,8 +65,40 @@ export function overlap(a: Box, b: Box, gap = 1): boolean {
   );
 }
 
+/** Lines that labels should not cross: a curve as one y per pixel from `from` on, and straight strokes. */
+export interface Ink {
+  readonly from: number;
+  readonly curve: readonly number[];
+  readonly lines: readonly {
+    readonly x0: number;
+    readonly x1: number;
+    readonly y0: number;
+    readonly y1: number;
+  }[];
+}
+
+function crosses(box: Box, { from, curve, lines }: Ink): boolean {
+  const top = box.top + 1;
+  const bottom = box.top + box.height;
+  const first = Math.max(0, Math.floor(box.left) - from);
+  const last = Math.min(curve.length - 1, Math.ceil(box.left + box.width) - from);
+  for (let i = first; i < last; i++) {
+    const a = curve[i] ?? 0;
+    const b = curve[i + 1] ?? a;
+    if (Math.max(a, b) > top && Math.min(a, b) < bottom) return true;
+  }
+  return lines.some(({ x0, x1, y0, y1 }) => {
+    const left = Math.max(box.left, x0);
+    const right = Math.min(box.left + box.width, x1);
+    if (left >= right) return false;
+    const at = (x: number): number => y0 + ((y1 - y0) * (x - x0)) / (x1 - x0);
+    return Math.max(at(left), at(right)) > top && Math.min(at(left), at(right)) < bottom;
+  });
+}
+
 export class Placer {
   private readonly taken: Box[] = [];
+  private ink: Ink | null = null;
   constructor(
     private readonly left: number,
     private readonly right: number,
@@ -84,6 +116,16 @@ export class Placer {
 
   take(box: Box): void {
     this.taken.push(box);
+  }
+
+  keepOff(ink: Ink): void {
+    this.ink = ink;
+  }
+
+  /** The first free wish that crosses none of the ink; taken at once. */
+  clear(wishes: readonly Box[]): Box | null {
+    const { ink } = this;
+    return this.first(ink ? wishes.filter((wish) => !crosses(this.inside(wish), ink)) : wishes);
   }
 
   /** The first of the wishes (moved inside the frame) that is free; taken at once. null when none is. */

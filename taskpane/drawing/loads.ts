@@ -28,7 +28,9 @@ const POINT_LEAST = 18;
 const LINE = TEXT + 3;
 const SAMPLES = 24;
 /** a label may climb this many lines before it is left out */
-const CLIMB = 5;
+const CLIMB = 4;
+/** a distributed load's label looks for a place between the point arrows in steps of this size */
+const SIDESTEP = 7;
 
 export interface LoadsDrawing {
   readonly group: SVGElement;
@@ -63,6 +65,9 @@ export class LoadPainter {
   private top = 0;
   private bottom = 0;
   private readonly model: BeamModel;
+  /** point loads from left to right, and where their arrows stand */
+  private readonly points: readonly Of<'point'>[];
+  private readonly shafts: readonly number[];
 
   constructor(
     private readonly input: DrawingInput,
@@ -75,6 +80,10 @@ export class LoadPainter {
   ) {
     this.model = input.model;
     this.placer = new Placer(2, frame.width - 2);
+    this.points = input.model.loads
+      .filter((load): load is Of<'point'> => load.kind === 'point')
+      .sort((a, b) => a.at - b.at);
+    this.shafts = this.points.map((load) => frame.x(load.at));
   }
 
   paint(): LoadsDrawing {
@@ -85,9 +94,9 @@ export class LoadPainter {
       this.block(load, peak);
     }
     for (const load of loads) if (load.kind === 'camber' || load.kind === 'curvature') this.arc(load);
-    const points = loads.filter((load): load is Of<'point'> => load.kind === 'point');
-    const most = Math.max(...points.map((load) => Math.abs(load.force)), 0);
-    for (const load of [...points].sort((a, b) => a.at - b.at)) this.arrow(load, most);
+    const most = Math.max(...this.points.map((load) => Math.abs(load.force)), 0);
+    // from the right: a label that leans to the right then never stands in the way of an arrow still to come
+    for (let i = this.points.length - 1; i >= 0; i--) this.arrow(i, most);
     for (const load of loads) {
       if (load.kind === 'couple') this.couple(load);
       else if (load.kind === 'axial') this.axial(load);
@@ -124,32 +133,62 @@ export class LoadPainter {
     }
   }
 
-  /** Tries the text centred over x with its baseline at y, then higher lines; gives the baseline used. */
-  private text(
-    group: SVGElement,
-    words: string,
-    x: number,
-    baseline: number,
-    climb = CLIMB,
-    step = -LINE,
-  ): number | null {
-    const width = textWidth(words, TEXT);
-    const wishes: Box[] = [];
-    for (let line = 0; line <= climb; line++) {
-      wishes.push({ left: x - width / 2, top: baseline + line * step - TEXT + 1, width, height: TEXT + 1 });
-    }
+  /** Draws the text in the first free place of the wishes; gives its baseline, or null when there is none. */
+  private write(group: SVGElement, words: string, wishes: readonly Box[]): number | null {
     const box = this.placer.first(wishes);
     if (!box) return null;
     const y = box.top + TEXT - 1;
     group.append(
       svg(
         'text',
-        { class: 'sp-label', x: px(box.left + width / 2), y: px(y), 'text-anchor': 'middle' },
+        { class: 'sp-label', x: px(box.left + box.width / 2), y: px(y), 'text-anchor': 'middle' },
         words,
       ),
     );
     this.reach(box.top, y);
     return y;
+  }
+
+  /** Tries the text with its left edge (or its middle) at x and its baseline at y, then higher lines. */
+  private text(
+    group: SVGElement,
+    words: string,
+    x: number,
+    baseline: number,
+    { climb = CLIMB, step = -LINE, centred = true } = {},
+  ): number | null {
+    const width = textWidth(words, TEXT);
+    const left = centred ? x - width / 2 : x;
+    const wishes: Box[] = [];
+    for (let line = 0; line <= climb; line++) {
+      wishes.push({ left, top: baseline + line * step - TEXT + 1, width, height: TEXT + 1 });
+    }
+    return this.write(group, words, wishes);
+  }
+
+  /** A label over a stretch: in its middle, else beside it, but not across a point arrow; one line higher as a last try. */
+  private over(
+    group: SVGElement,
+    words: string,
+    left: number,
+    right: number,
+    baseline: number,
+  ): number | null {
+    const width = textWidth(words, TEXT);
+    const middle = (left + right - width) / 2;
+    const reach = Math.max(0, (right - left - width) / 2 + 12);
+    const wishes: Box[] = [];
+    for (const line of [0, 1]) {
+      for (let shift = 0; shift <= reach; shift += SIDESTEP) {
+        for (const at of shift === 0 ? [middle] : [middle - shift, middle + shift]) {
+          const box = { left: at, top: baseline - line * LINE - TEXT + 1, width, height: TEXT + 1 };
+          const inside = this.placer.inside(box);
+          const crossed = this.shafts.some((x) => x > inside.left - 3 && x < inside.left + width + 3);
+          if (!crossed) wishes.push(box);
+        }
+      }
+    }
+    return this.write(group, words, wishes);
   }
 
   private largest(load: Of<'distributed'>): number {
@@ -213,25 +252,34 @@ export class LoadPainter {
     group.append(svg('path', { class: 'sp-arrow', d: arrows }));
 
     const roof = floor - Math.max(...values.map(size));
-    const baseline = this.text(group, words, (left + right) / 2, roof - 3);
+    const baseline = this.over(group, words, left, right, roof - 3);
     this.reach(roof);
     this.placer.take({ left, top: roof, width: right - left, height: floor - roof });
     const top = baseline === null ? roof : baseline - TEXT + 1;
     this.stack.push({ from: left, to: right, top: Math.min(roof, top) });
   }
 
-  private arrow(load: Of<'point'>, most: number): void {
-    const x = this.frame.x(load.at);
-    const length = Math.max(POINT_LEAST, (Math.abs(load.force) / most) * POINT_MOST);
+  private arrow(index: number, most: number): void {
+    const load = this.points[index];
+    const x = this.shafts[index];
+    if (!load || x === undefined) return;
+    const length = Math.max(POINT_LEAST, most > 0 ? (Math.abs(load.force) / most) * POINT_MOST : 0);
     const tip = -this.half(load.at) - 1;
     const level = this.levelOver(x - 1, x + 1);
     const words = this.label(load, withUnit(this.number(Math.abs(load.force)), unitOf(this.model, 'force')));
     const group = this.begin(load, words);
     const wish = Math.min(tip - length, level - 8);
-    const baseline = this.text(group, words, x, wish - 3);
+    const neighbour = this.shafts[index - 1] ?? -Infinity;
+    const centred = x - neighbour > textWidth(words, TEXT) / 2 + 4;
+    const width = textWidth(words, TEXT);
+    const { left } = this.placer.inside({ left: centred ? x - width / 2 : x - 3, top: 0, width, height: 1 });
+    // at the right edge a label is pushed back over its neighbours: then it is left out
+    const baseline =
+      neighbour > left - 3 ? null : this.text(group, words, left, wish - 3, { centred: false });
     // a label that had to climb keeps its arrow attached
     const tail = baseline === null ? wish : Math.min(wish, baseline + 3);
     this.reach(tail);
+    this.placer.take({ left: x - 2, top: tail, width: 4, height: tip - tail });
     const [from, to] = load.force >= 0 ? [tail, tip] : [tip, tail];
     const shaft = path('M', x, from, 'V', to + (to > from ? -5 : 5));
     group.append(
@@ -316,7 +364,19 @@ export class LoadPainter {
         svg('path', { class: 'sp-head', d: path('M', to, 0, 'l', -6 * d, -3, 'v', 6, 'Z') }),
       );
     }
-    this.text(group, words, this.frame.left + textWidth(words, TEXT) / 2, -this.half(this.model.start) - 6);
+    const width = textWidth(words, TEXT);
+    const high = -this.half(this.model.start) - 6 - TEXT;
+    const low = this.below - TEXT;
+    const { left, right } = this.frame;
+    const box = (x: number, top: number): Box => ({ left: x, top, width, height: TEXT + 1 });
+    // above an end where nothing stands, else below it between the supports
+    this.write(group, words, [
+      box(left, high),
+      box(right - width, high),
+      box(left + 14, low),
+      box(right - width - 14, low),
+      box(left + 14, low + LINE),
+    ]);
   }
 
   /** Camber bows up over its stretch; free curvature is drawn to the side it bends. */
@@ -344,7 +404,7 @@ export class LoadPainter {
         d: path('M', left, base, 'Q', (left + right) / 2, base + (up ? -2 : 2) * rise, right, base),
       }),
     );
-    const baseline = this.text(group, words, (left + right) / 2, floor - rise - 3);
+    const baseline = this.over(group, words, left, right, floor - rise - 3);
     this.reach(floor - rise);
     this.stack.push({ from: left, to: right, top: (baseline ?? floor - rise) - TEXT });
   }
@@ -365,7 +425,7 @@ export class LoadPainter {
         svg('path', { class: 'sp-shaft', d: path('M', x, from, 'V', to) }),
         svg('path', { class: 'sp-head', d: head(x, to, down) }),
       );
-      this.text(group, words, x + 6 + textWidth(words, TEXT) / 2, top + 12, 2, LINE);
+      this.text(group, words, x + 6 + textWidth(words, TEXT) / 2, top + 12, { climb: 2, step: LINE });
       this.reach(top + 14);
       return;
     }
@@ -385,7 +445,7 @@ export class LoadPainter {
         d: path('M', x + s * 10.5, top + 6.5, 'l', s * -6.5, -1.2, 'l', s * 5, -5, 'Z'),
       }),
     );
-    this.text(group, words, x + 14 + textWidth(words, TEXT) / 2, top + 12, 2, LINE);
+    this.text(group, words, x + 14 + textWidth(words, TEXT) / 2, top + 12, { climb: 2, step: LINE });
     this.reach(top + 14);
   }
 }

@@ -4,6 +4,7 @@
  */
 import type { Area, Block, TableInfo, WorkbookPort } from '../port';
 import { parseArea } from '../address';
+import { basicOf, textOf } from '../values';
 import { parseFormula, type Node } from './parse';
 
 /** A matrix of raw values, and the one area it came from when the argument is a plain reference. */
@@ -167,33 +168,22 @@ async function evaluateReference(node: Node & { kind: 'reference' }, place: Plac
   return readArea(place, (await place.port.spill(area)) ?? area);
 }
 
-/** Basic value of a rich cell; blank stays blank. */
-function basic(value: unknown): unknown {
-  if (typeof value === 'object' && value !== null && 'basicValue' in value) {
-    return (value as { basicValue: unknown }).basicValue;
-  }
-  return value;
-}
-
 function one(argument: Argument): unknown {
   if (argument.values.length !== 1 || argument.values[0]?.length !== 1) throw new CannotFollow('shape', '');
-  return basic(argument.values[0][0]);
+  return basicOf(argument.values[0][0]);
 }
 
 function number(argument: Argument): number {
   const value = one(argument);
   if (value === null || value === undefined || value === '') return 0;
-  const result =
-    typeof value === 'boolean' ? Number(value) : typeof value === 'number' ? value : Number(value);
-  if (Number.isNaN(result)) throw new CannotFollow('error', String(value));
+  const result = Number(value);
+  if (Number.isNaN(result)) throw new CannotFollow('error', textOf(value));
   return result;
 }
 
 function joinText(argument: Argument): string {
   const value = one(argument);
-  if (value === null || value === undefined) return '';
-  if (typeof value === 'boolean') return value ? 'TRUE' : 'FALSE';
-  return String(value as string | number);
+  return typeof value === 'boolean' ? (value ? 'TRUE' : 'FALSE') : textOf(value);
 }
 
 /** Throws CannotFollow with the piece it does not understand. */

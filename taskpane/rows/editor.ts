@@ -7,6 +7,7 @@ import { h, put } from '../dom';
 import { exactNumber, readNumber } from '../numbers';
 import type { Separators } from '../port';
 import { texts } from '../texts';
+import { basicOf, textOf } from '../values';
 import { attachCompletion, type Completion } from './completion';
 import {
   adopt,
@@ -42,6 +43,9 @@ export interface Sheet {
   readonly readOnly: boolean;
 }
 
+/** Columns that are shown only when a row uses them, because a pane is narrow. */
+const RARE: ReadonlySet<ColumnName> = new Set<ColumnName>(['End value', 'Note']);
+
 interface Place {
   readonly row: number;
   readonly column: number;
@@ -61,12 +65,19 @@ export class RowsEditor {
   private shown: number[] = [];
   private current: Place | null = null;
   private messages: ReadonlyMap<number, readonly string[]> = new Map();
+  /** show also the columns that no row uses */
+  private all = false;
+  private readonly allLine: HTMLElement;
   private typed: { place: Place; text: string } | null = null;
 
   constructor(private readonly events: EditorEvents) {
     const button = (key: keyof typeof texts.rows.actions, run: () => void): HTMLButtonElement => {
       const { label, hint } = texts.rows.actions[key];
-      return h('button', { type: 'button', class: 'sp-tool', title: hint, click: run }, label);
+      return h(
+        'button',
+        { type: 'button', class: 'sp-tool', title: hint, 'aria-label': hint, click: run },
+        label,
+      );
     };
     this.buttons = {
       add: button('add', () => this.add()),
@@ -83,6 +94,12 @@ export class RowsEditor {
       h('thead', null, this.head),
       this.body,
     );
+    const all = h('input', { type: 'checkbox' });
+    all.addEventListener('change', () => {
+      this.all = all.checked;
+      this.build();
+    });
+    this.allLine = h('label', { class: 'sp-choice sp-quiet' }, all, texts.rows.allColumns);
     this.layer = h('div', { class: 'sp-rows-layer' }, h('div', { class: 'sp-rows-scroll' }, this.table));
     this.element = h(
       'div',
@@ -93,6 +110,7 @@ export class RowsEditor {
         Object.values(this.buttons),
       ),
       this.layer,
+      this.allLine,
     );
     this.element.addEventListener('keydown', (event) => this.shortcut(event));
     this.table.addEventListener('paste', (event) => this.paste(event));
@@ -151,7 +169,19 @@ export class RowsEditor {
   private build(): void {
     const { sheet } = this;
     if (!sheet || !this.history) return;
-    this.shown = sheet.columns.flatMap((name, index) => (name === null ? [] : [index]));
+    const { rows } = this.history.current;
+    const needed = (name: ColumnName | null, index: number): boolean => {
+      if (name === null) return false;
+      if (this.all || !RARE.has(name)) return true;
+      return (
+        rows.some((row) => (row[index]?.value ?? '') !== '' || (row[index]?.formula ?? '') !== '') ||
+        (name === 'End value' &&
+          rows.some((_, row) => guideOf(this.valueIn(row, 'Item'))?.word === 'varying'))
+      );
+    };
+    this.shown = sheet.columns.flatMap((name, index) => (needed(name, index) ? [index] : []));
+    const rare = sheet.columns.some((name) => name !== null && RARE.has(name));
+    this.allLine.hidden = !rare;
     put(
       this.head,
       h('th', { scope: 'col', class: 'sp-number' }, h('span', { class: 'sp-hidden' }, texts.rows.rowNumber)),
@@ -285,14 +315,9 @@ export class RowsEditor {
   }
 
   private showText(cell: Cell): string {
-    const { value } = cell;
-    if (value === null || value === undefined) return '';
-    const separators = this.sheet?.separators;
-    if (typeof value === 'number') return exactNumber(Number(value.toPrecision(12)), separators);
-    if (typeof value === 'object' && 'basicValue' in value) {
-      return this.showText({ ...cell, value: (value as { basicValue: unknown }).basicValue });
-    }
-    return String(value as string | boolean);
+    const value = basicOf(cell.value);
+    if (typeof value === 'number') return exactNumber(Number(value.toPrecision(12)), this.sheet?.separators);
+    return textOf(value);
   }
 
   private editText(cell: Cell): string {
@@ -380,9 +405,21 @@ export class RowsEditor {
   }
 
   private after(before: Draft, next: Draft, focus: Place | null): void {
+    const varied =
+      this.sheet?.columns.some(
+        (name, i) =>
+          name !== null &&
+          RARE.has(name) &&
+          !this.shown.includes(i) &&
+          next.rows.some(
+            (row) =>
+              guideOf(row[this.sheet?.columns.indexOf('Item') ?? 0]?.value)?.word === 'varying' &&
+              name === 'End value',
+          ),
+      ) ?? false;
     const structural =
       before.rows.length !== next.rows.length || before.slots.some((slot, i) => slot !== next.slots[i]);
-    if (structural) this.build();
+    if (structural || varied) this.build();
     else this.values();
     this.refresh();
     if (focus) this.focus(focus);

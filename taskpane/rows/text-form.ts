@@ -1,5 +1,6 @@
 /** Rows to the one-cell text form: cells in column order as long as none is blank, the later ones by their key. */
 import type { ColumnName } from '../engine';
+import { textOf } from '../values';
 import { COLUMNS } from './guide';
 
 const KEYS: Readonly<Partial<Record<ColumnName, string>>> = {
@@ -21,8 +22,7 @@ export function rowText(cells: Readonly<Partial<Record<ColumnName, unknown>>>): 
   const words: string[] = [];
   let inOrder = true;
   for (const column of COLUMNS) {
-    const value = cells[column];
-    const text = value === null || value === undefined ? '' : String(value as string | number).trim();
+    const text = textOf(cells[column]).trim();
     if (text === '') {
       inOrder = false;
       continue;

@@ -98,7 +98,9 @@ function reactions(open: OpenBeam, write: Write): HTMLElement {
     named(texts.answers.force, unitOf(model, 'reaction')),
   ];
   if (couples) head.push(named(texts.answers.couple, unitOf(model, 'couple')));
-  return table(texts.answers.reactions, head, rows);
+  const made = table(texts.answers.reactions, head, rows);
+  made.classList.add('sp-second-left');
+  return made;
 }
 
 function usedBar(check: Check, write: Write): HTMLElement {

@@ -31,7 +31,8 @@ export class MessagesView {
     put(this.hostBox);
   }
 
-  show(reviewed: Reviewed | null, lost: Extract<Found, { kind: 'lost' }> | null): void {
+  /** `atRows`: the rows are in sight and carry their own messages */
+  show(reviewed: Reviewed | null, lost: Extract<Found, { kind: 'lost' }> | null, atRows: boolean): void {
     const wrong: string[] = [];
     if (lost) {
       wrong.push(
@@ -39,13 +40,17 @@ export class MessagesView {
         texts.lost[lost.reason.reason](lost.reason.what),
       );
     }
-    if (reviewed) wrong.push(...reviewed.issues.map(say));
+    if (reviewed) {
+      const elsewhere = reviewed.issues.filter((issue) => !atRows || issue.row === undefined);
+      wrong.push(...elsewhere.map(say));
+    }
     const cautions = reviewed?.cautions ?? [];
+    const without = reviewed?.without ?? '';
     // the same words again are not news to a screen reader
-    const all = JSON.stringify([wrong, cautions]);
+    const all = JSON.stringify([wrong, cautions, reviewed?.without]);
     if (all === this.words) return;
     this.words = all;
-    this.wrong.hidden = wrong.length === 0;
+    this.wrong.hidden = wrong.length === 0 && without === '';
     const rest = wrong.length - MOST;
     put(
       this.wrong,
@@ -54,6 +59,7 @@ export class MessagesView {
         { class: 'sp-plain' },
         wrong.slice(0, MOST).map((words) => h('li', null, words)),
         rest > 0 ? h('li', null, texts.messages.more(rest)) : null,
+        without === '' ? null : h('li', { class: 'sp-without' }, without),
       ),
     );
     const open = this.cautions.open;
