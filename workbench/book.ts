@@ -2,7 +2,7 @@
  * The open workbook of the embedded spreadsheet: the one place that knows where its engine keeps values, formulas, spilled
  * cells and names. Used by the page, by the pane's port and by the headless recalculation alike.
  */
-import type { ICellData, IRange, IWorkbookData, Nullable, Univer, Workbook, Worksheet } from '@univerjs/core';
+import type { ICellData, IWorkbookData, Nullable, Univer, Workbook, Worksheet } from '@univerjs/core';
 import type { FUniver } from '@univerjs/core/facade';
 import { FormulaDataModel, IDefinedNamesService } from '@univerjs/engine-formula';
 import type { FWorkbook } from '@univerjs/sheets/facade';
@@ -64,6 +64,7 @@ export interface BookContents {
 const PATIENCE = 120_000;
 
 // Values of CellValueType of the engine's core; written out so that this file needs only types from it.
+const BLOCKED = '#SPILL!';
 const STRING = 1;
 const BOOLEAN = 3;
 const FORCED_STRING = 4;
@@ -157,32 +158,13 @@ export class Book {
     return this.formulas.getArrayFormulaCellData()[this.id]?.[sheet.getSheetId()];
   }
 
-  /** The cells that the formula at row, column spilled into; null when it gives one value. */
+  /** The cells that the formula at row, column spilled into; null when it gives one value or was blocked. */
   spillOf(sheet: Worksheet, row: number, column: number): Rectangle | null {
     const range = this.formulas.getArrayFormulaRange()[this.id]?.[sheet.getSheetId()]?.[row]?.[column];
-    if (range === undefined || range === null) return null;
+    // the engine keeps the range it would have needed; where it was blocked nothing has spilled
+    if (!range || sheet.getCellMatrix().getValue(row, column)?.v === BLOCKED) return null;
     const { startRow, startColumn, endRow, endColumn } = range;
     return { startRow, startColumn, endRow, endColumn };
-  }
-
-  /** The formula cell whose result spilled into this cell (which holds nothing of its own); null when none did. */
-  spillOrigin(sheet: Worksheet, row: number, column: number): { row: number; column: number } | null {
-    const ranges = this.formulas.getArrayFormulaRange()[this.id]?.[sheet.getSheetId()] ?? {};
-    for (const [originRow, columns] of Object.entries(ranges))
-      for (const [originColumn, range] of Object.entries(
-        (columns ?? {}) as Record<string, Nullable<IRange>>,
-      )) {
-        if (!range) continue;
-        if (
-          row < range.startRow ||
-          row > range.endRow ||
-          column < range.startColumn ||
-          column > range.endColumn
-        )
-          continue;
-        return { row: Number(originRow), column: Number(originColumn) };
-      }
-    return null;
   }
 
   /** Every cell that holds a value or a formula of its own, row by row (spilled-into cells are not among them). */
@@ -231,9 +213,11 @@ export class Book {
       }
     }
     const spills = this.formulas.getArrayFormulaRange()[this.id]?.[sheet.getSheetId()] ?? {};
-    for (const columns of Object.values(spills))
-      for (const range of Object.values((columns ?? {}) as Record<string, Nullable<IRange>>))
-        if (range) include(range);
+    for (const [row, columns] of Object.entries(spills))
+      for (const column of Object.keys((columns ?? {}) as object)) {
+        const range = this.spillOf(sheet, Number(row), Number(column));
+        if (range !== null) include(range);
+      }
     return endRow < 0 ? null : { startRow, startColumn, endRow, endColumn };
   }
 

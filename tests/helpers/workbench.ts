@@ -2,7 +2,9 @@
 import { existsSync, readFileSync } from 'node:fs';
 import path from 'node:path';
 
-export type Workbench = typeof import('../../workbench/headless');
+import type * as Exports from '../../workbench/headless';
+
+export type Workbench = typeof Exports;
 export type Headless = ReturnType<Workbench['createHeadless']>;
 export type Bundle = ReturnType<Workbench['evaluateBundle']>;
 
@@ -31,6 +33,12 @@ export function loadBundle(workbench: Workbench): Bundle {
   return workbench.evaluateBundle(read('functions.js'), read('functions.json'));
 }
 
+function cellOf(value: number | string | boolean): { f?: string; v?: number | string; t?: number } {
+  if (typeof value === 'string' && value.startsWith('=')) return { f: value };
+  if (typeof value === 'boolean') return { v: value ? 1 : 0, t: 3 };
+  return { v: value, t: typeof value === 'number' ? 2 : 1 };
+}
+
 /** Cells as a snapshot of one or more sheets: rows of values, a text with "=" is a formula, null leaves a cell out. */
 export function snapshotOf(
   sheets: Readonly<Record<string, readonly (readonly (number | string | boolean | null)[])[]>>,
@@ -52,14 +60,7 @@ export function snapshotOf(
           cellData: Object.fromEntries(
             (sheets[name] ?? []).map((row, r) => [
               r,
-              Object.fromEntries(
-                row.flatMap((value, c) => {
-                  if (value === null) return [];
-                  if (typeof value === 'string' && value.startsWith('=')) return [[c, { f: value }]];
-                  if (typeof value === 'boolean') return [[c, { v: value ? 1 : 0, t: 3 }]];
-                  return [[c, { v: value, t: typeof value === 'number' ? 2 : 1 }]];
-                }),
-              ),
+              Object.fromEntries(row.flatMap((value, c) => (value === null ? [] : [[c, cellOf(value)]]))),
             ]),
           ),
         },

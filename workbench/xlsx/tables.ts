@@ -51,7 +51,7 @@ export function withoutTables(
   const names = tables.map((one) => one.name.replace(/[.\\]/g, '\\$&')).sort((a, b) => b.length - a.length);
   if (names.length === 0) return { formula, failed, changed };
   const pattern = new RegExp(
-    `"(?:[^"]|"")*"|'(?:[^']|'')*'|(?<![\\w.!])(${names.join('|')})(?![\\w.(])(\\[(?:[^\\[\\]]|\\[(?:[^\\[\\]']|'.)*\\])*\\])?`,
+    `"(?:[^"]|"")*"|'(?:[^']|'')*'|(?<![\\w.!])(${names.join('|')})(?![\\w.(])(\\[(?:[^\\[\\]']|'.|\\[(?:[^\\[\\]']|'.)*\\])*\\])?`,
     'gi',
   );
   const turned = formula.replace(pattern, (whole, name?: string, specifier?: string) => {
