@@ -9,10 +9,17 @@ export function say(issue: Issue): string {
   const word = WORDED.get(issue.code);
   const sentence = placeOf(issue) + (word === undefined ? general(issue) : word(issue));
   const { suggestion } = issue;
-  // Some sentences work their suggestion in; the others end with it.
-  const end = suggestion === undefined || sentence.includes(suggestion) ? '' : ` Did you mean ${suggestion}?`;
+  const end = suggestion === undefined || INSIDE.has(issue.code) ? '' : ` Did you mean ${suggestion}?`;
   return sentence.charAt(0).toUpperCase() + sentence.slice(1) + end;
 }
+
+/** These work their suggestion into the sentence; the others end with it. */
+const INSIDE: ReadonlySet<string> = new Set([
+  'unit-missing',
+  'ignored-heading',
+  'limit-unlikely',
+  'header-incomplete',
+]);
 
 /** The first sentence and how many more there are. */
 export function sayAll(issues: readonly Issue[]): string {
