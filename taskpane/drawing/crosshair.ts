@@ -75,7 +75,7 @@ export function makeCrosshair(
       spoken.push(`${texts.quantity[diagram.quantity]} ${withUnit(words, unitOf(model, diagram.quantity))}`);
       diagram.reading.textContent = at === null ? '' : words;
     }
-    element.setAttribute('aria-valuenow', String(position));
+    element.setAttribute('aria-valuenow', String(Number(position.toPrecision(6))));
     element.setAttribute('aria-valuetext', spoken.join(', '));
     if (at === null) return;
     const x = frame.x(at);

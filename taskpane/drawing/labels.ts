@@ -25,12 +25,8 @@ let measure: Measure | null = null;
 
 /** Measures with a canvas in the face of an element, from now on; returns false where there is no canvas. */
 export function measureLike(element: Element): boolean {
-  let context: CanvasRenderingContext2D | null = null;
-  try {
-    context = document.createElement('canvas').getContext('2d');
-  } catch {
-    // no canvas here
-  }
+  if (typeof CanvasRenderingContext2D === 'undefined') return false;
+  const context = document.createElement('canvas').getContext('2d');
   if (!context) return false;
   const face = getComputedStyle(element).fontFamily || 'sans-serif';
   const known = new Map<string, number>();

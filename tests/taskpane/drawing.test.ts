@@ -6,6 +6,7 @@ import { draw, type Drawing } from '../../taskpane/drawing/drawing';
 import type { DrawingInput, DrawingOptions } from '../../taskpane/drawing/frame';
 import { overlap, textWidth, type Box } from '../../taskpane/drawing/labels';
 import { PLAIN } from '../../taskpane/numbers';
+import { textOf } from '../../taskpane/values';
 import { BEAMS } from '../helpers/pane-beams';
 
 const OPTIONS: DrawingOptions = {
@@ -24,7 +25,7 @@ function input(rows: readonly (readonly unknown[])[], combination: string | null
     response: open?.response ?? null,
     factors: open?.combination?.factors ?? null,
     show: (quantity, value) => (open ? open.show(quantity, value) : value),
-    word: (row) => String(table.rows.find((one) => one.row === row)?.cells.Item),
+    word: (row) => textOf(table.rows.find((one) => one.row === row)?.cells.Item),
   };
 }
 

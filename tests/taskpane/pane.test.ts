@@ -1,0 +1,377 @@
+import { mountPane, type MountedPane } from '../../taskpane/pane';
+import { MemoryPort } from '../helpers/memory-port';
+
+const HEAD = ['Item', 'At', 'To', 'Value', 'End value', 'Unit', 'Case', 'Note'];
+const ROWS: unknown[][] = [
+  HEAD,
+  ['units', 'kN', 'm', 'mm'],
+  ['pin', 0],
+  ['pin', 6],
+  ['E', null, null, 210, null, 'GPa'],
+  ['I', null, null, 8400, null, 'cm4'],
+  ['uniform', 0, 6, 12, null, 'kN/m', 'Q'],
+];
+
+let port: MemoryPort;
+let pane: MountedPane;
+let root: HTMLElement;
+
+async function settle(milliseconds = 60): Promise<void> {
+  await new Promise((resolve) => setTimeout(resolve, milliseconds));
+}
+
+async function open(cell: string, rows = ROWS, formula = '=SPANROW.DEFLECTION(B4:I10, 3)'): Promise<void> {
+  localStorage.clear();
+  document.body.innerHTML = '<div id="pane"></div>';
+  port = new MemoryPort('Beams', 'Other');
+  port.fill('B4', rows);
+  port.fill('L2', [[formula]]);
+  port.selectCell(cell);
+  pane = mountPane(document.getElementById('pane') as HTMLElement, port);
+  await settle();
+  root = document.querySelector('.sp-pane') as HTMLElement;
+}
+afterEach(() => pane.dispose());
+
+const words = (selector: string): string => root.querySelector(selector)?.textContent ?? '';
+const button = (name: string): HTMLButtonElement => {
+  const found = Array.from(root.querySelectorAll('button')).find((one) =>
+    (one.getAttribute('aria-label') ?? one.textContent ?? '').includes(name),
+  );
+  if (!found) throw new Error(`no button ${name}`);
+  return found;
+};
+const tab = (name: string): void => (root.querySelector(`#sp-tab-${name}`) as HTMLElement).click();
+const field = (label: string): HTMLInputElement => {
+  const found = root.querySelector(`input[aria-label="${label}"]`);
+  if (!found) throw new Error(`no field ${label}`);
+  return found as HTMLInputElement;
+};
+function type(label: string, text: string, commit = true): void {
+  const input = field(label);
+  input.focus();
+  input.value = text;
+  input.dispatchEvent(new Event('input', { bubbles: true }));
+  if (commit) input.blur();
+}
+const press = (element: Element, key: string, more: KeyboardEventInit = {}): void => {
+  element.dispatchEvent(new KeyboardEvent('keydown', { key, bubbles: true, cancelable: true, ...more }));
+};
+
+describe('review', () => {
+  test('the beam behind the selected formula: title, answer at x, reactions, crosshair at x', async () => {
+    await open('L2');
+    expect(words('.sp-title')).toBe('Beam B4:I10');
+    expect(words('.sp-sub')).toContain('DEFLECTION in L2');
+    // 5wL⁴/384EI = 5·12·6⁴/(384·210e6·8400e-8) m (textbook) = 11.4796 mm
+    expect(words('.sp-asked')).toContain('11.4796 mm');
+    expect(Array.from(root.querySelectorAll('.sp-second-left td'), (cell) => cell.textContent)).toContain(
+      '36',
+    );
+    expect(root.querySelector('.sp-crosshair')?.getAttribute('aria-valuetext')).toContain(
+      'Deflection 11.48 mm',
+    );
+  });
+
+  test('another cell without a beam keeps the last one and says so; a beam cell shows its beam', async () => {
+    await open('L2');
+    port.selectCell('Z50');
+    await settle();
+    expect(words('.sp-sub')).toContain('the selected cell has no beam');
+    expect(root.querySelectorAll('.sp-curve').length).toBe(4);
+    port.selectCell('C6');
+    await settle();
+    expect(words('.sp-sub')).toContain('read as in L2');
+  });
+
+  test('held, the beam stays while other formulas are selected, and follows its own cells', async () => {
+    await open('L2');
+    port.fill('L3', [['=SPANROW.USED("pin 0; pin 1; EI value=1; uniform 0 1 1","span/1")']]);
+    button('Hold').click();
+    port.selectCell('L3');
+    await settle();
+    expect(words('.sp-title')).toBe('Beam B4:I10');
+    port.fill('E10', [[24]]);
+    port.changed();
+    await settle();
+    expect(words('.sp-asked')).toContain('22.9592 mm');
+    button('Hold').click();
+    await settle();
+    expect(words('.sp-title')).toContain('written in the formula');
+  });
+
+  test('errors stand in words, with what can be sketched; they go when their cause goes', async () => {
+    await open('L2', [...ROWS.slice(0, 3), ['pinn', 6], ...ROWS.slice(4)]);
+    expect(words('.sp-wrong-box:not([hidden])')).toMatch(/Row 4.*pinn.*pin/s);
+    expect(words('.sp-without')).toBe('Sketch without row 4.');
+    expect(root.querySelectorAll('.sp-beam').length).toBe(1);
+    port.fill('B7', [['pin']]);
+    port.changed();
+    await settle();
+    expect(root.querySelector('.sp-wrong-box:not([hidden])')).toBeNull();
+    expect(root.querySelectorAll('.sp-curve').length).toBe(4);
+  });
+
+  test('a call that cannot be followed is explained; the standing cautions are always there', async () => {
+    await open('L2', ROWS, '=SPANROW.USED(INDIRECT("B4:I10"))');
+    expect(words('.sp-wrong-box:not([hidden])')).toContain('INDIRECT(…)');
+    expect(words('.sp-standing')).toContain('qualified engineer');
+  });
+
+  test('the crosshair moves by keys and reads all quantities', async () => {
+    await open('L2');
+    const cross = root.querySelector('.sp-crosshair') as HTMLElement;
+    cross.focus();
+    press(cross, 'Home');
+    expect(cross.getAttribute('aria-valuetext')).toContain('at 0 m, Shear 36 kN, Bending moment 0 kN·m');
+    press(cross, 'PageDown');
+    expect(cross.getAttribute('aria-valuenow')).toBe('3');
+    press(cross, 'ArrowRight', { shiftKey: true });
+    expect(cross.getAttribute('aria-valuenow')).toBe('3.6');
+    expect(words('.sp-part-moment .sp-reading')).toBe('51.84'); // wx(L−x)/2 = 12·3.6·2.4/2 (textbook)
+  });
+
+  test('several calls in one formula can be chosen', async () => {
+    await open('L2', ROWS, '=SPANROW.MOMENT(B4:I10,2)+SPANROW.SHEAR(B4:I10,1)');
+    expect(words('.sp-asked')).toContain('Bending moment at 2 m');
+    const select = root.querySelector('.sp-which select') as HTMLSelectElement;
+    select.value = '1';
+    select.dispatchEvent(new Event('change'));
+    await settle();
+    expect(words('.sp-asked')).toContain('Shear at 1 m');
+  });
+
+  test("the host's theme and separators are taken over", async () => {
+    await open('L2');
+    port.setTheme({ dark: true, background: '#101010', text: '#fafafa' });
+    expect([root.dataset['theme'], root.style.getPropertyValue('--sp-paper')]).toEqual(['dark', '#101010']);
+    pane.dispose();
+    port.numberSeparators = { decimal: ',', group: '.', list: ';' };
+    pane = mountPane(document.getElementById('pane') as HTMLElement, port);
+    await settle();
+    root = document.querySelector('.sp-pane') as HTMLElement;
+    expect(words('.sp-asked')).toContain('11,4796 mm');
+  });
+});
+
+describe('rows', () => {
+  beforeEach(async () => {
+    await open('L2');
+    tab('rows');
+    await settle();
+  });
+
+  test('typing previews in the sketch and in words; only leaving the cell writes it', async () => {
+    type('Row 7, Value', '20', false);
+    expect(words('.sp-loads text')).toBe('Q 20 kN/m');
+    expect(port.valueAt('E10')).toBe(12);
+    type('Row 7, Unit', 'kN', false);
+    expect(words('.sp-row-message')).toContain('Row 7');
+    expect(port.valueAt('G10')).toBe('kN/m');
+    press(field('Row 7, Unit'), 'Escape'); // closes the list
+    press(field('Row 7, Unit'), 'Escape'); // takes the typing back
+    expect(root.querySelector('.sp-row-message')).toBeNull();
+    type('Row 7, Value', '20');
+    await settle();
+    expect(port.valueAt('E10')).toBe(20);
+  });
+
+  test('undo and redo write the sheet, too', async () => {
+    type('Row 7, Value', '20');
+    await settle();
+    button('Undo').click();
+    await settle();
+    expect(port.valueAt('E10')).toBe(12);
+    button('Redo').click();
+    await settle();
+    expect(port.valueAt('E10')).toBe(20);
+  });
+
+  test('completion of item words by keys', async () => {
+    type('Row 4, Item', 'ro', false);
+    const options = Array.from(root.querySelectorAll('[role=option]'), (option) => option.textContent);
+    expect(options[0]).toBe('roller');
+    press(field('Row 4, Item'), 'ArrowDown');
+    press(field('Row 4, Item'), 'Enter');
+    field('Row 4, Item').blur();
+    await settle();
+    expect(port.valueAt('B7')).toBe('roller');
+  });
+
+  test('add, move, copy and remove reach the sheet; the range grows and its formulas follow', async () => {
+    field('Row 7, Item').focus();
+    button('Add a row').click();
+    await settle();
+    type('Row 8, Item', 'point');
+    await settle();
+    expect(port.formulaAt('L2')).toBe('=SPANROW.DEFLECTION(B4:I11, 3)');
+    expect([port.valueAt('B10'), port.valueAt('B11')]).toEqual(['uniform', 'point']);
+    type('Row 8, At', '2');
+    type('Row 8, Value', '5');
+    type('Row 8, Unit', 'kN');
+    await settle();
+    expect(root.querySelector('.sp-wrong-box:not([hidden])')).toBeNull();
+    field('Row 8, Item').focus();
+    button('Move this row up').click();
+    await settle();
+    expect([port.valueAt('B10'), port.valueAt('B11'), port.valueAt('E11')]).toEqual(['point', 'uniform', 12]);
+    field('Row 7, Item').focus();
+    button('Remove this row').click();
+    await settle();
+    expect([port.valueAt('B10'), port.valueAt('B11')]).toEqual(['uniform', null]);
+  });
+
+  test('cells below a full range are named before they move, and stay when the person says no', async () => {
+    port.fill('C12', [['note of the checker']]);
+    field('Row 7, Item').focus();
+    button('Add a row').click();
+    type('Row 8, Item', 'hinge');
+    await settle();
+    expect(words('[role=alertdialog]')).toContain('C12');
+    button('Cancel').click();
+    await settle();
+    expect([port.valueAt('C12'), port.valueAt('B11')]).toEqual(['note of the checker', null]);
+  });
+
+  test('a block pasted from a sheet fills cells and adds rows', async () => {
+    const input = field('Row 7, Item');
+    input.focus();
+    const event = new Event('paste', { bubbles: true, cancelable: true });
+    Object.assign(event, { clipboardData: { getData: () => 'uniform\t0\t6\t5\npoint\t2\t\t7,5' } });
+    input.dispatchEvent(event);
+    await settle();
+    expect([port.valueAt('E10'), port.valueAt('B11'), port.valueAt('C11'), port.valueAt('E11')]).toEqual([
+      5,
+      'point',
+      2,
+      '7,5',
+    ]);
+  });
+
+  test('a formula in a cell is shown by its value, edited as a formula, and kept', async () => {
+    port.fill('E10', [['=4*3']]);
+    port.changed();
+    await settle();
+    const input = field('Row 7, Value');
+    input.focus();
+    expect(input.value).toBe('=4*3');
+    input.blur();
+    type('Row 7, Value', '=5*3');
+    await settle();
+    expect(port.formulaAt('E10')).toBe('=5*3');
+  });
+
+  test('rows written as text in one cell are edited as rows and written back as text', async () => {
+    port.fill('N1', [['pin 0; pin 6; EI value=100; uniform 0 6 "2" case=G']]);
+    port.fill('L3', [['=SPANROW.DEFLECTION(N1, 3)']]);
+    port.selectCell('L3');
+    await settle();
+    type('Row 4, Value', '5');
+    await settle();
+    expect(port.valueAt('N1')).toBe('pin 0; pin 6; EI value=100; uniform 0 6 5 case=G');
+  });
+});
+
+describe('place', () => {
+  test('a formula goes into an empty cell at once, into a filled one only after a yes that names it', async () => {
+    await open('L2');
+    tab('place');
+    port.selectCell('M2');
+    await settle();
+    button('Put it in M2').click();
+    await settle();
+    expect(port.formulaAt('M2')).toBe('=SPANROW.MAXDEFLECTION($B$4:$I$10)');
+    port.fill('M3', [['mine']]);
+    port.selectCell('M3');
+    await settle();
+    button('Put it in M3').click();
+    await settle();
+    expect(words('[role=alertdialog]')).toContain('M3');
+    expect(port.valueAt('M3')).toBe('mine');
+    button('Replace it').click();
+    await settle();
+    expect(port.formulaAt('M3')).toContain('SPANROW.MAXDEFLECTION');
+  });
+
+  test('x, combination and another sheet are composed into the formula', async () => {
+    await open('L2');
+    tab('place');
+    port.selectCell('A1', 'Other');
+    await settle();
+    const [answer] = Array.from(root.querySelectorAll('select'));
+    const set = (element: HTMLInputElement | HTMLSelectElement, value: string): void => {
+      element.value = value;
+      element.dispatchEvent(new Event('input', { bubbles: true }));
+    };
+    set(answer as HTMLSelectElement, 'MOMENT');
+    const [x, combination] = Array.from(root.querySelectorAll<HTMLInputElement>('.sp-input'));
+    set(x as HTMLInputElement, '3-');
+    set(combination as HTMLInputElement, '1.5 Q');
+    expect(words('.sp-code')).toBe('=SPANROW.MOMENT(Beams!$B$4:$I$10, "3-", "1.5 Q")');
+  });
+
+  test('the answer cannot be put into the rows it is about', async () => {
+    await open('L2');
+    tab('place');
+    port.selectCell('C6');
+    await settle();
+    expect(button('Put it in').disabled).toBe(true);
+  });
+
+  test('every starting point is a beam without an error, in every system of units', async () => {
+    await open('Z1');
+    for (const units of ['metric', 'american', 'none']) {
+      const names = Array.from(root.querySelectorAll('.sp-card'), (card) => card.textContent ?? '');
+      expect(names.length).toBe(8);
+      for (const [i, name] of names.entries()) {
+        port.selectCell(`K${20 + 20 * i}`, 'Other');
+        await settle(10);
+        const select = root.querySelector('.sp-block select') as HTMLSelectElement;
+        if (root.querySelectorAll('.sp-block select').length > 1) throw new Error('more than one list');
+        select.value = units;
+        select.dispatchEvent(new Event('change'));
+        port.sheets.get('Other')?.clear();
+        button(name).click();
+        await settle();
+        port.selectCell(`K${22 + 20 * i}`, 'Other');
+        await settle();
+        expect([name, units, root.querySelector('.sp-wrong-box:not([hidden])')?.textContent]).toEqual([
+          name,
+          units,
+          undefined,
+        ]);
+        expect(root.querySelectorAll('.sp-curve').length).toBe(4);
+        pane.dispose();
+        port.selectCell('Z1');
+        pane = mountPane(document.getElementById('pane') as HTMLElement, port);
+        await settle(10);
+        root = document.querySelector('.sp-pane') as HTMLElement;
+      }
+    }
+  }, 30_000);
+});
+
+test('tabs: arrow keys move, and the choice survives closing the pane', async () => {
+  await open('L2');
+  const first = root.querySelector('#sp-tab-beam') as HTMLElement;
+  first.focus();
+  press(first, 'ArrowRight');
+  expect(root.querySelector('#sp-tab-rows')?.getAttribute('aria-selected')).toBe('true');
+  expect(root.querySelector('[role=tabpanel]')?.getAttribute('aria-labelledby')).toBe('sp-tab-rows');
+  pane.dispose();
+  pane = mountPane(document.getElementById('pane') as HTMLElement, port);
+  expect(document.querySelector('#sp-tab-rows')?.getAttribute('aria-selected')).toBe('true');
+});
+
+test('a host that refuses is quoted, and the pane goes on', async () => {
+  await open('L2');
+  const read = port.read.bind(port);
+  port.read = () => Promise.reject(new Error('the sheet is protected'));
+  port.selectCell('L2');
+  await settle();
+  expect(words('.sp-wrong-box:not([hidden])')).toContain('the sheet is protected');
+  port.read = read;
+  port.selectCell('L2');
+  await settle();
+  expect(root.querySelector('.sp-wrong-box:not([hidden])')).toBeNull();
+});
