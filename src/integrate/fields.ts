@@ -16,7 +16,7 @@
 import { addScaled, evaluate, integrateFrom, multiply } from './polynomial';
 import { loadPolynomial, noLoad, type Fields, type RegionLoad } from './region-load';
 import type { Region } from './regions';
-import { integrateSeries } from './series';
+import { integrateSeries, seriesState } from './series';
 
 /** Order of a state vector everywhere in src/integrate: deflection, rotation, moment, vertical force. */
 export type State = Float64Array;
@@ -95,15 +95,19 @@ export function particular(
     out[at + 3] = -0.5 * h * (qa + qb);
     return;
   }
-  const fields = integrateRegion(region, axial, load, ZERO);
   const u = region.origin + 1;
+  if (region.origin === 0) {
+    seriesState(region, axial, load, ZERO, u, out, at, 1);
+    return;
+  }
+  const fields = integrateRegion(region, axial, load, ZERO);
   out[at] = evaluate(fields.v, u);
   out[at + 1] = evaluate(fields.t, u);
   out[at + 2] = evaluate(fields.M, u);
   out[at + 3] = evaluate(fields.S, u);
 }
 
-const ZERO = new Float64Array(4);
+const ZERO = [0, 0, 0, 0];
 
 /** Writes the transfer matrix of a region (row-major 4x4) into T[at..]: state at the right end = T x state at the left, without load. */
 export function transfer(region: Region, axial: number, T: Float64Array, at: number): void {
@@ -126,6 +130,10 @@ export function transfer(region: Region, axial: number, T: Float64Array, at: num
   for (let j = coupled ? 0 : 2; j < 4; j++) {
     unit.fill(0);
     unit[j] = 1;
+    if (coupled && region.origin === 0) {
+      seriesState(region, axial, none, unit, u, T, at + j, 4);
+      continue;
+    }
     const fields = integrateRegion(region, axial, none, unit);
     T[at + j] = evaluate(fields.v, u);
     T[at + 4 + j] = evaluate(fields.t, u);

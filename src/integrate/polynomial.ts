@@ -46,18 +46,19 @@ export function addScaled(p: Poly, q: Poly, scale: number): number[] {
   return out;
 }
 
-/** Integral of p*q over from..from+1, term by term (exact up to rounding). */
+/** Integral of u^n over 0..1 and over -1/2..1/2. */
+const POWERS = 256;
+const overUnit = Float64Array.from({ length: POWERS }, (_, n) => 1 / (n + 1));
+const overCentred = Float64Array.from({ length: POWERS }, (_, n) => (n % 2 === 0 ? 0.5 ** n / (n + 1) : 0));
+
+/** Integral of p*q over from..from+1 (from = 0 or -1/2), term by term: exact up to rounding. */
 export function productIntegral(p: Poly, q: Poly, from: number): number {
+  const moments = from === 0 ? overUnit : overCentred;
   let sum = 0;
-  const to = from + 1;
   for (let i = 0; i < p.length; i++) {
     const a = p[i]!;
     if (a === 0) continue;
-    for (let j = 0; j < q.length; j++) {
-      const n = i + j + 1;
-      const width = from === 0 ? 1 : to ** n - from ** n;
-      sum += (a * q[j]! * width) / n;
-    }
+    for (let j = 0; j < q.length; j++) sum += a * q[j]! * moments[i + j]!;
   }
   return sum;
 }

@@ -188,11 +188,9 @@ export class BeamResponse implements Response {
         const better = best === null || (s > rank && s - rank > Math.abs(rank) * (SAME - 1));
         if (!better) return;
         rank = s;
-        const at =
-          u === region.origin + 1
-            ? breaks[r + 1]!
-            : Math.min(region.x0 + (u - region.origin) * region.h, breaks[r + 1]!);
-        best = { value, at, side };
+        const at = u === region.origin + 1 ? breaks[r + 1]! : region.x0 + (u - region.origin) * region.h;
+        // a root a hair before the right end falls on the break itself: it is still this region's, so seen from the left
+        best = at >= breaks[r + 1]! ? { value, at: breaks[r + 1]!, side: 'left' } : { value, at, side };
       };
       consider(u0, 'right');
       for (const u of rootsIn(derivative(poly), u0, u1)) consider(u, 'right');

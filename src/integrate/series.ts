@@ -39,6 +39,34 @@ export function integrateSeries(
   return expand(region, axial, load, c[0]!, c[1]!, c[2]!, c[3]!);
 }
 
+/** Writes the state at u into out[at], out[at + stride], ... (v, rotation, M, S), from the state at u = 0 (origin-0 regions only). */
+export function seriesState(
+  region: Region,
+  axial: number,
+  load: RegionLoad,
+  start: readonly number[],
+  u: number,
+  out: Float64Array,
+  at: number,
+  stride: number,
+): void {
+  const n = run(region, axial, load, start[0]!, start[1]!, start[2]!, start[3]!);
+  let a = 0;
+  let b = 0;
+  let c = 0;
+  let d = 0;
+  for (let k = n - 1; k >= 0; k--) {
+    a = a * u + v[k]!;
+    b = b * u + t[k]!;
+    c = c * u + m[k]!;
+    d = d * u + s[k]!;
+  }
+  out[at] = a;
+  out[at + stride] = b;
+  out[at + 2 * stride] = c;
+  out[at + 3 * stride] = d;
+}
+
 const lefts = new WeakMap<Region, { axial: number; matrix: Float64Array }>();
 
 /** Homogeneous map from the middle of a region to its left end (row-major 4x4), kept with the region. */
@@ -93,7 +121,13 @@ function solveScaled(A: Float64Array, b: number[], region: Region): number[] {
   return x.map((value, i) => value / d[i]!);
 }
 
-/** The series about u = 0 from the state there. */
+function copy(from: Float64Array, length: number): number[] {
+  const out: number[] = [];
+  for (let k = 0; k < length; k++) out.push(from[k]!);
+  return out;
+}
+
+/** The series about u = 0 from the state there, as four polynomials. */
 function expand(
   region: Region,
   axial: number,
@@ -103,6 +137,20 @@ function expand(
   m0: number,
   s0: number,
 ): Fields {
+  const n = run(region, axial, load, v0, t0, m0, s0);
+  return { v: copy(v, n), t: copy(t, n), M: copy(m, n), S: copy(s, n) };
+}
+
+/** Fills the coefficients v, t, m, s and returns how many there are. */
+function run(
+  region: Region,
+  axial: number,
+  load: RegionLoad,
+  v0: number,
+  t0: number,
+  m0: number,
+  s0: number,
+): number {
   const { h, k, fPoly, gPoly } = region;
   const N = axial;
   const q = loadPolynomial(region, load);
@@ -155,7 +203,5 @@ function expand(
     quiet = size <= NEGLIGIBLE * largest ? quiet + 1 : 0;
     if (quiet >= 4 && next >= least) break;
   }
-  const length = Math.min(n + 1, MAX_TERMS + 1);
-  const take = (from: Float64Array): number[] => Array.from(from.subarray(0, length));
-  return { v: take(v), t: take(t), M: take(m), S: take(s) };
+  return Math.min(n + 1, MAX_TERMS + 1);
 }
