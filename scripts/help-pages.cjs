@@ -72,7 +72,9 @@ function functionBody(doc, before, after) {
   const parameters = doc.parameters.map((p) => {
     const words = p.words.map(({ word, text }) => `<li><code>"${word}"</code> ${escape(text)}</li>`);
     const list = words.length > 0 ? `<ul>${words.join('')}</ul>` : '';
-    return `<dt><code>${p.name}</code>${p.optional ? ' <em>may be left out</em>' : ''}</dt><dd>${escape(p.text)}${list}</dd>`;
+    // the list says the words; of the sentence about them only the default is left to say
+    const text = words.length > 0 ? (/Left out:.*/.exec(p.text)?.[0] ?? '') : p.text;
+    return `<dt><code>${p.name}</code>${p.optional ? ' <em>may be left out</em>' : ''}</dt><dd>${escape(text)}${list}</dd>`;
   });
   const examples = doc.examples.map(
     ({ formula, text }) => `<div class="example"><code>${escape(formula)}</code><p>${escape(text)}</p></div>`,
