@@ -35,7 +35,7 @@ export interface LaidOut {
 export function layOut(raw: readonly (readonly unknown[])[]): LaidOut {
   const issues: Issue[] = [];
   const cautions: Issue[] = [];
-  const only = raw.length === 1 && raw[0]!.length === 1 ? normaliseCell(raw[0]![0]) : null;
+  const only = raw.length === 1 && raw[0]?.length === 1 ? normaliseCell(raw[0][0]) : null;
   if (typeof only === 'string') {
     const read = readTextRows(only);
     issues.push(...read.issues);
@@ -43,12 +43,15 @@ export function layOut(raw: readonly (readonly unknown[])[]): LaidOut {
     return { rows, layout: { header: false, columns: COLUMNS, ignored: [] }, issues, cautions, text: true };
   }
 
-  const cells = raw.map((row) => row.map(normaliseCell));
+  const cells = raw.map((row) => (Array.isArray(row) ? row : [row]).map(normaliseCell));
   const top = cells.findIndex((row) => !row.every(isBlank) && !isRemark(row.find((cell) => !isBlank(cell))));
   const layout = readHeader(top < 0 ? [] : cells[top]!, top + 1, widest(cells), issues, cautions);
+  const spoilt = issues.some(({ code }) => code === 'header-incomplete');
   const rows = cells.map((row, i): RowInfo => {
-    if (layout.header && i === top)
+    // A header with a missing column has been named; its words are no items.
+    if (i === top && (layout.header || spoilt)) {
       return { row: i + 1, kind: 'header', item: null, cells: named(row, layout) };
+    }
     return classify(named(row, layout), i + 1, issues);
   });
   return { rows, layout, issues, cautions, text: false };
