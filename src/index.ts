@@ -6,6 +6,9 @@ export { cautionsOf } from './ask/readback';
 export { spansOf, spanName, type Span } from './ask/spans';
 export { namedPositions } from './ask/profile';
 export { supportName } from './ask/reactions';
+export { regionsOf, type RegionWork } from './ask/regions';
+export { conditionsOf, type Condition } from './ask/conditions';
+export type { Fit } from './ask/equation';
 export { EFFECTS, PARTS, QUANTITIES, SENSES, STANDARD_POINTS, type Effect } from './ask/words';
 export { heading, unitOf, write } from './ask/units';
 export type {

@@ -20,6 +20,7 @@ import { MessagesView } from './view/messages';
 import { PlaceView } from './view/place-view';
 import { RowsView } from './view/rows-view';
 import { makeTabs } from './view/tabs';
+import { WorkingView } from './view/working';
 
 export interface MountedPane {
   dispose(): void;
@@ -43,6 +44,7 @@ class Pane {
   private readonly answers = new AnswersView();
   private readonly rows: RowsView;
   private readonly place: PlaceView;
+  private readonly working = new WorkingView((words) => this.announce(words));
   private readonly panel = h('div', { class: 'sp-panel', role: 'tabpanel', id: 'sp-panel', tabindex: -1 });
   private readonly empty = h('div', { class: 'sp-empty' });
   private readonly subscriptions: Unsubscribe[] = [];
@@ -225,11 +227,13 @@ class Pane {
     this.showPlace();
     if (beam) this.rows.show(reviewed, this.separators);
     this.answers.show(tab === 'beam' ? reviewed : null, this.separators);
+    if (tab === 'working') this.working.show(reviewed, this.separators);
     const parts: (HTMLElement | null)[] = [];
     if (tab === 'place') parts.push(this.place.element, this.place.starts);
     else if (!beam) parts.push(this.empty, lost ? null : this.place.starts);
     else if (tab === 'beam') parts.push(this.drawing.element, this.answers.element, this.head.readFrom);
     else if (tab === 'rows') parts.push(this.drawing.element, this.rows.element);
+    else parts.push(this.working.element);
     put(this.empty, lost ? null : h('p', null, texts.empty.title));
     const wanted = parts.filter((part): part is HTMLElement => part !== null);
     // what is already in place stays in place: the focus and the scroll with it

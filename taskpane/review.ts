@@ -2,6 +2,7 @@
 import {
   ask,
   BeamProblem,
+  cautionsOf,
   readPosition,
   reviewBeam,
   say,
@@ -119,12 +120,13 @@ export function reviewCells(subject: Subject, cells: readonly (readonly unknown[
     byRow.set(issue.row - 1, words);
   };
   issues.forEach(note);
-  open?.cautions.forEach(note);
+  const cautions = [...(open?.cautions ?? []), ...(open ? cautionsOf(open) : [])];
+  cautions.forEach(note);
   return {
     subject,
     review,
     issues,
-    cautions: (open?.cautions ?? []).map(say),
+    cautions: cautions.map(say),
     byRow,
     open,
     model,

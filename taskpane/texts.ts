@@ -143,6 +143,32 @@ export const texts = {
       `Equilibrium holds to ${equilibrium}, support conditions to ${conditions} of their own size.`,
   },
 
+  working: {
+    intro: (down: boolean, combination: string) =>
+      `Double integration with y ${down ? 'down' : 'up'}, region by region; s is measured from the left end of each region.${combination === '' ? '' : ` Combination ${combination}.`}`,
+    law: (down: boolean) => (down ? 'EI v″ = −M(s)' : 'EI v″ = M(s)'),
+    region: (index: number, from: string, to: string) => `Region ${index}: ${from} to ${to}`,
+    stiffness: 'EI',
+    load: 'Load w(s)',
+    none: 'none',
+    constants: 'Constants',
+    notPolynomial:
+      'M/EI has no polynomial integral here. The solved curves are given as polynomials fitted to them; the largest departure is stated.',
+    departure: (size: string) => `within ${size}`,
+    conditions: 'Conditions that fix the constants',
+    condition: 'Condition',
+    left: 'Left side',
+    right: 'Right side',
+    over: 'Left over',
+    copy: 'Copy as text',
+    copied: 'The working is on the clipboard, ready to be pasted into cells.',
+    cannotCopy:
+      'This host does not let the pane use the clipboard. REGIONS puts the same working into cells.',
+    unfold: 'Open all',
+    fold: 'Close all',
+    noAnswer: 'There is no working: the beam has no answer yet.',
+  },
+
   rows: {
     table: 'Rows of the beam',
     toolbar: 'Change rows',

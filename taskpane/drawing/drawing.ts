@@ -92,9 +92,10 @@ export function draw(input: DrawingInput, options: DrawingOptions): Drawing {
   for (const at of input.marks ?? []) {
     if (at < input.model.start || at > input.model.end) continue;
     const x = frame.x(at);
-    root.append(
-      svg('path', { class: 'sp-mark', d: path('M', x, beam ? beam.drawing.axis : 0, 'V', height - 2) }),
-    );
+    if (diagrams.length > 0) {
+      const d = path('M', x, beam ? beam.drawing.axis : 0, 'V', height - 2);
+      root.append(svg('path', { class: 'sp-mark', d }));
+    }
     if (beam) {
       root.append(
         svg('path', {
