@@ -15,7 +15,9 @@ const { book, dispose } = workbench.createHeadless(workbench.bundle);
 await book.open(workbench.demoWorkbook());
 const contents = book.contents();
 const errors = contents.sheets.flatMap(({ name, cells }) =>
-  cells.filter(({ value }) => typeof value === 'string' && value.startsWith('#')).map(({ row, column, value }) => `${name}!${workbench.cellName(row, column)} ${value}`),
+  cells
+    .filter(({ value }) => typeof value === 'string' && value.startsWith('#'))
+    .map(({ row, column, value }) => `${name}!${workbench.cellName(row, column)} ${value}`),
 );
 if (errors.length > 0) {
   console.error(`The demo has errors: ${errors.join(', ')}`);

@@ -49,7 +49,9 @@ for (const sheet of book.sheets()) {
     if (isError) wrong += 1;
     const message = book.messageAt(sheet, row, column);
     const spilled = spill === null ? '' : `  (to ${cellName(spill.endRow, spill.endColumn)})`;
-    console.log(`${sheet.getName()}!${cellName(row, column)}  ${value ?? ''}${spilled}${message ? `  ${message}` : ''}`);
+    console.log(
+      `${sheet.getName()}!${cellName(row, column)}  ${value ?? ''}${spilled}${message ? `  ${message}` : ''}`,
+    );
   }
 }
 

@@ -15,7 +15,7 @@ export const FORMATS = {
   soft: { cl: SOFT },
   note: { cl: SOFT, it: 1 },
   section: { bl: 1, fs: 12, cl: { rgb: '#215251' }, bd: { b: HEAVY } },
-  head: { bl: 1, cl: INK, bg: { rgb: '#e4ebe9' }, bd: { b: LINE }, tb: 3, vt: 2 },
+  head: { bl: 1, fs: 10, cl: INK, bg: { rgb: '#e4ebe9' }, bd: { b: LINE }, tb: 3, vt: 2 },
   columns: { bl: 1, cl: INK, bg: { rgb: '#e4ebe9' }, bd: { b: LINE } },
   input: { cl: INK, bg: { rgb: '#fbf4dc' }, bd: { t: LINE, b: LINE, l: LINE, r: LINE } },
   result: { bl: 1, cl: INK, bg: { rgb: '#eaf2ef' }, bd: { t: LINE, b: LINE, l: LINE, r: LINE } },
