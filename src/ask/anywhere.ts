@@ -151,14 +151,26 @@ function byEquilibrium(
   }
 }
 
+/**
+ * An axle nearer to a named position than this fraction of the beam is put on it: a load a few roundings away from a
+ * support leaves nothing but rounding to the rest of the beam, and no effect asked for here feels the difference.
+ */
+const ONTO = 1e-9;
+
 /** The axles that stand on the beam when the first is at t, as loads of the model. */
-function loadsAt(model: BeamModel, axles: readonly Axle[], distances: readonly number[], t: number): Load[] {
-  const snap = snapOf(model);
-  const loads: Load[] = [];
+function loadsAt(
+  model: BeamModel,
+  axles: readonly Axle[],
+  distances: readonly number[],
+  t: number,
+): Extract<Load, { kind: 'point' }>[] {
+  const reach = ONTO * (model.end - model.start);
+  const named = namedPositions({ ...model, loads: [] });
+  const loads: Extract<Load, { kind: 'point' }>[] = [];
   axles.forEach((axle, i) => {
     const x = t + (distances[i] as number);
-    if (x < model.start - snap || x > model.end + snap) return;
-    const at = Math.min(Math.max(x, model.start), model.end);
+    const at = named.find((one) => Math.abs(one - x) <= reach) ?? x;
+    if (at < model.start || at > model.end) return;
     loads.push({ row: 0, case: -1, kind: 'point', at, force: model.axis * axle.force });
   });
   return loads;
@@ -226,8 +238,8 @@ function inTurn(
   }
 }
 
-/** Positions tried in each stretch between events before closing in; the extreme over the sections is smooth there, with few waves. */
-const PROBES = 8;
+/** Positions tried in each stretch between events before closing in: the extreme over the sections is smooth there, with few waves. */
+const PROBES = 4;
 
 function byPosition(
   model: BeamModel,
@@ -239,13 +251,31 @@ function byPosition(
   const breaks = namedPositions({ ...model, loads: [] });
   const sign = (value: number): number =>
     sense === 'largest' ? -Math.abs(value) : sense === 'highest' ? -value : value;
+  let least = Infinity;
+  const stretches: { level: (t: number) => number; tries: number[]; levels: number[] }[] = [];
   for (const distances of waysOf(axles)) {
     const level = (t: number): number => {
       const loads = loadsAt(model, axles, distances, t);
       if (loads.length === 0) return 0;
-      const peak = peakOf(model, respondTo(model, loads), effect, sense);
+      const response = respondTo(model, loads);
+      const peak = peakOf(model, response, effect, sense);
       best.take(peak.value, t, peak.at);
-      return sign(peak.value);
+      let here = sign(peak.value);
+      if (effect === 'shear') {
+        // an axle on a support may stand a hair to either side of it, and then carries its own step of V with it
+        for (const { at, force } of loads) {
+          if (!breaks.includes(at)) continue;
+          const steps: number[] = [];
+          if (at < model.end) steps.push(response.value('shear', at, 'right') + force);
+          if (at > model.start) steps.push(response.value('shear', at, 'left') - force);
+          for (const value of steps) {
+            best.take(value, t, at);
+            here = Math.min(here, sign(value));
+          }
+        }
+      }
+      least = Math.min(least, here);
+      return here;
     };
     const events = eventsOf(breaks, distances, snapOf(model));
     events.forEach((t, e) => {
@@ -253,16 +283,21 @@ function byPosition(
       const next = events[e + 1];
       if (next === undefined) return;
       const tries = Array.from({ length: PROBES + 1 }, (_, i) => t + ((next - t) * i) / PROBES);
-      const levels = tries.map(level);
-      levels.forEach((here, i) => {
-        if (i === 0 || i === PROBES) return;
-        if (here <= (levels[i - 1] as number) && here <= (levels[i + 1] as number)) {
-          lowestBetween(level, tries[i - 1] as number, tries[i + 1] as number);
-        }
-      });
-      // a valley next to an event shows in its first or last probe only
-      lowestBetween(level, t, tries[1] as number);
-      lowestBetween(level, tries[PROBES - 1] as number, next);
+      stretches.push({ level, tries, levels: tries.map(level) });
     });
+  }
+  // close in where the probes leave room for something worse than all that is known
+  const reach = (levels: readonly number[]): number => {
+    let steepest = 0;
+    for (let i = 1; i < levels.length; i++) {
+      steepest = Math.max(steepest, Math.abs((levels[i] as number) - (levels[i - 1] as number)));
+    }
+    return Math.min(...levels) - steepest;
+  };
+  stretches.sort((a, b) => reach(a.levels) - reach(b.levels));
+  for (const { level, tries, levels } of stretches) {
+    if (reach(levels) >= least) break;
+    const at = levels.indexOf(Math.min(...levels));
+    lowestBetween(level, tries[Math.max(0, at - 1)] as number, tries[Math.min(PROBES, at + 1)] as number);
   }
 }

@@ -1,7 +1,7 @@
 /**
  * The boundary, support and continuity conditions that fix the constants of integration, each with the values of its two
  * sides computed from the region equations (not from the solution's own joints), so that what is left over is a check.
- * Reader's signs; deflections in the deflection unit.
+ * Reader's signs; deflections in the deflection unit. With camber, deflection and slope here are those beyond its shape.
  */
 import type { Load, Support } from '../beam/model';
 import type { OpenBeam } from '../open';
@@ -38,9 +38,9 @@ export function conditionsOf(open: OpenBeam, works: readonly RegionWork[]): Cond
   places.forEach((x, i) => {
     const before = works[i - 1];
     const after = works[i];
-    const left = before === undefined ? null : stateOf(open, before, before.to - before.from);
-    const right = after === undefined ? null : stateOf(open, after, 0);
-    const here = left ?? right;
+    const left = before === undefined ? null : stateOf(open, before, before.to - before.from, factorOf);
+    const right = after === undefined ? null : stateOf(open, after, 0, factorOf);
+    const here = left ?? (right as State);
     const support = model.supports.find((one) => one.at === x);
     const reaction = all.find((one) => one.at === x);
     const released = (kind: 'moment' | 'shear'): boolean =>
@@ -124,13 +124,25 @@ export function conditionsOf(open: OpenBeam, works: readonly RegionWork[]): Cond
   return list;
 }
 
-/** Both diagrams and both curves of a region at s, from its own equations. */
-function stateOf(open: OpenBeam, work: RegionWork, s: number): State {
-  const perLength = open.model.units?.deflectionPerLength ?? 1;
+/** Both diagrams and both curves of a region at s, from its own equations; the camber's shape is taken out, for it is no strain. */
+function stateOf(open: OpenBeam, work: RegionWork, s: number, factorOf: (load: Load) => number): State {
+  const { model } = open;
+  const perLength = model.units?.deflectionPerLength ?? 1;
   const moment = 'coefficients' in work.moment ? work.moment.coefficients : work.moment;
+  let bow = 0;
+  let tilt = 0;
+  for (const load of model.loads) {
+    if (load.kind !== 'camber' || load.from > work.from || load.to < work.to) continue;
+    const length = load.to - load.from;
+    const left = work.from + s - load.from;
+    const right = load.to - work.from - s;
+    // -4 rise t (1 - t), up being negative in the model
+    bow -= (factorOf(load) * 4 * load.rise * left * right) / length ** 2;
+    tilt -= (factorOf(load) * 4 * load.rise * (right - left)) / length ** 2;
+  }
   return {
-    v: perLength * evaluateAny(work.deflection, s),
-    slope: evaluateAny(work.slope, s),
+    v: perLength * (evaluateAny(work.deflection, s) - model.axis * bow),
+    slope: evaluateAny(work.slope, s) - model.axis * tilt,
     moment: evaluate(moment, s),
     shear: evaluate(derivative(moment), s),
   };

@@ -96,10 +96,14 @@ const NOBODY = { row: 0, case: -1 } as const;
 export function influenceField(model: BeamModel, effect: Effect, section: Section): Segment[] {
   const { x, side } = section;
   switch (effect) {
-    case 'deflection':
-      return shape(model, { ...NOBODY, kind: 'point', at: x, force: 1 });
-    case 'slope':
-      return shape(model, { ...NOBODY, kind: 'couple', at: x, couple: 1 });
+    case 'deflection': {
+      const act = (at: number): Load => ({ ...NOBODY, kind: 'point', at, force: 1 });
+      return released(model, 'shear', x) ? beside(model, act, x, side) : shape(model, act(x));
+    }
+    case 'slope': {
+      const act = (at: number): Load => ({ ...NOBODY, kind: 'couple', at, couple: 1 });
+      return released(model, 'moment', x) ? beside(model, act, x, side) : shape(model, act(x));
+    }
     case 'reaction':
       return shape(model, {
         ...NOBODY,
@@ -113,6 +117,11 @@ export function influenceField(model: BeamModel, effect: Effect, section: Sectio
     case 'shear':
       return sectionForce(model, effect, x, side);
   }
+}
+
+/** A release at x: the two faces move apart there, and the unit action belongs to one of them. */
+function released(model: BeamModel, kind: 'moment' | 'shear', x: number): boolean {
+  return model.releases.some((release) => release.at === x && release.kind === kind);
 }
 
 function shape(model: BeamModel, load: Load, factor = 1): Segment[] {
@@ -132,7 +141,7 @@ function sectionForce(model: BeamModel, effect: 'moment' | 'shear', x: number, s
   // A support takes up a dislocation at its own place, so there the section's force comes from the reactions' lines.
   if (model.foundations.length === 0 && bare(model).length === 0)
     return fromReactions(model, effect, x, side);
-  return besideSupport(model, effect, x, side);
+  return beside(model, (at) => dislocation(effect, at), x, side);
 }
 
 /** Influence lines of every reaction and couple at once: each unit movement of a support is a case of one solution. */
@@ -203,22 +212,23 @@ function cut(field: readonly Segment[], from: number, to: number): Coefficients 
 }
 
 /**
- * On a foundation or under axial force equilibrium needs the whole shape; there the dislocation is put a hair's breadth
- * beside the support, and the sliver between them is given back to its neighbour. The sliver is 2^-40 of the beam, so
- * what changes over it (q x sliver in V, V x sliver in M) is about 1e-12 of the result.
+ * A unit action on one side of a joint that would swallow it: of a support, on a foundation or under axial force (where
+ * equilibrium of the part needs the whole shape), or of a release. It is put a hair's breadth beside the joint, and the
+ * sliver between them is given back to its neighbour. The sliver is 2^-40 of the beam, so what changes over it (V x
+ * sliver in M, and the like) is about 1e-12 of the result.
  */
 const SLIVER = 2 ** -40;
 
-function besideSupport(model: BeamModel, effect: 'moment' | 'shear', s: number, side: Side): Segment[] {
+function beside(model: BeamModel, act: (at: number) => Load, s: number, side: Side): Segment[] {
   const step = SLIVER * Math.max(model.end - model.start, Math.abs(s));
-  const beside = side === 'left' ? s - step : s + step;
-  const field = shape(model, dislocation(effect, beside));
+  const at = side === 'left' ? s - step : s + step;
+  const field = shape(model, act(at));
   const kept = field.filter((one) =>
-    side === 'left' ? one.to <= beside || one.from >= s : one.from >= beside || one.to <= s,
+    side === 'left' ? one.to <= at || one.from >= s : one.from >= at || one.to <= s,
   );
   return kept.map((one) => {
-    const from = side === 'right' && one.from === beside ? s : one.from;
-    const to = side === 'left' && one.to === beside ? s : one.to;
+    const from = side === 'right' && one.from === at ? s : one.from;
+    const to = side === 'left' && one.to === at ? s : one.to;
     if (from === one.from && to === one.to) return one;
     const h = one.to - one.from;
     return { from, to, c: compose(one.c, (from - one.from) / h, (to - from) / h) };

@@ -98,6 +98,9 @@ export function regions(open: OpenBeam): (number | string)[][] {
       "where EI v' and EI v have no polynomial, C1 and C2 are the slope and the deflection at s = 0 themselves",
     ]);
   }
+  if (open.model.loads.some((load) => load.kind === 'camber')) {
+    rows.push(["in the conditions, deflection and slope are those beyond the camber's shape"]);
+  }
   rows.push(['condition', heading('at', length), 'left side', 'right side', 'left over']);
   for (const one of conditionsOf(open, works)) {
     rows.push([one.text, one.at, plain(one.left), plain(one.right), plain(one.left - one.right)]);

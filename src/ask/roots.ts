@@ -44,26 +44,61 @@ export function rootBetween(f: (x: number) => number, a: number, b: number, fa: 
 }
 
 const GOLDEN = (3 - Math.sqrt(5)) / 2;
+/** The place of a smooth minimum is good to sqrt(eps): nearer, the values no longer differ; the value itself is then exact. */
+const PLACE = Math.sqrt(Number.EPSILON);
 
-/** Lowest value of f on a..b and its place, for a function with one valley there (golden section; the value is exact to the square of the place's error). */
+/** Lowest value of f on a..b and its place, for a function with one valley there: parabolas, golden section where they fail. */
 export function lowestBetween(f: (x: number) => number, a: number, b: number): { x: number; value: number } {
-  let low = a;
-  let high = b;
-  let x1 = low + GOLDEN * (high - low);
-  let x2 = high - GOLDEN * (high - low);
-  let y1 = f(x1);
-  let y2 = f(x2);
-  // the place is good to sqrt(eps): below that the values no longer differ
-  while (high - low > 1e-9 * (Math.abs(low) + Math.abs(high)) && x1 < x2) {
-    if (y1 <= y2) {
-      [high, x2, y2] = [x2, x1, y1];
-      x1 = low + GOLDEN * (high - low);
-      y1 = f(x1);
+  let low = Math.min(a, b);
+  let high = Math.max(a, b);
+  let x = low + GOLDEN * (high - low);
+  let [second, third] = [x, x];
+  let value = f(x);
+  let [secondValue, thirdValue] = [value, value];
+  let step = 0;
+  let before = 0;
+  // each golden step takes 38 % off: 80 exhaust sqrt(eps) of any bracket
+  for (let turn = 0; turn < 80; turn++) {
+    const middle = (low + high) / 2;
+    const close = PLACE * Math.abs(x) + PLACE * PLACE * (b - a);
+    if (Math.abs(x - middle) <= 2 * close - (high - low) / 2) break;
+    let golden = true;
+    if (Math.abs(before) > close) {
+      const r = (x - second) * (value - thirdValue);
+      let q = (x - third) * (value - secondValue);
+      let p = (x - third) * q - (x - second) * r;
+      q = 2 * (q - r);
+      if (q > 0) p = -p;
+      q = Math.abs(q);
+      const last = before;
+      before = step;
+      if (Math.abs(p) < Math.abs((q * last) / 2) && p > q * (low - x) && p < q * (high - x)) {
+        step = p / q;
+        golden = false;
+        const to = x + step;
+        if (to - low < 2 * close || high - to < 2 * close) step = x < middle ? close : -close;
+      }
+    }
+    if (golden) {
+      before = x < middle ? high - x : low - x;
+      step = GOLDEN * before;
+    }
+    const to = Math.abs(step) >= close ? x + step : x + (step > 0 ? close : -close);
+    const here = f(to);
+    if (here <= value) {
+      if (to < x) high = x;
+      else low = x;
+      [third, thirdValue, second, secondValue] = [second, secondValue, x, value];
+      [x, value] = [to, here];
     } else {
-      [low, x1, y1] = [x1, x2, y2];
-      x2 = high - GOLDEN * (high - low);
-      y2 = f(x2);
+      if (to < x) low = to;
+      else high = to;
+      if (here <= secondValue || second === x) {
+        [third, thirdValue, second, secondValue] = [second, secondValue, to, here];
+      } else if (here <= thirdValue || third === x || third === second) {
+        [third, thirdValue] = [to, here];
+      }
     }
   }
-  return y1 <= y2 ? { x: x1, value: y1 } : { x: x2, value: y2 };
+  return { x, value };
 }

@@ -19,8 +19,8 @@ import { governing, testsOf, verdicts, type Test } from './check';
 import { lowestBetween, rootBetween } from './roots';
 import { write } from './units';
 
-/** Factors from 2^-60 to 2^60 (1e18 either way) are tried: beyond, a beam is a hinge or a rock for any purpose. */
-const WIDEST = 60;
+/** Factors from 2^-40 to 2^40 (1e12 either way) are tried: beyond, a beam is a hinge or a rock for any purpose. */
+const WIDEST = 40;
 
 /** The factor on every EI of the beam. Throws 'not-by-stiffness', 'no-limit', 'no-span'. */
 export function stiffnessFactor(open: OpenBeam, limit?: unknown): number {
@@ -84,7 +84,10 @@ function factorFor(model: BeamModel, solution: Solution, tests: readonly Test[])
       return governing(verdicts(model, solved(scaled(model, factor)), tests)).used;
     } catch (problem) {
       // an axial force beyond the critical load of the softer beam: no deflection is large enough
-      if (problem instanceof BeamProblem && problem.issues[0]?.code === 'past-critical-load') return Infinity;
+      const code = problem instanceof BeamProblem ? problem.issues[0]?.code : undefined;
+      if (code === 'past-critical-load') return Infinity;
+      // so stiff or so soft that the solve itself has no digits left: the search ends there
+      if (code === 'self-check-failed' || code === 'too-stiff') return NaN;
       throw problem;
     }
   };
@@ -137,7 +140,7 @@ function byConvexity(used: (t: number) => number, asIs: number): number {
     outside *= 2;
     above = used(outside);
   }
-  if (above <= 1) return alwaysMet(above);
+  if (!(above > 1)) return alwaysMet(Number.isNaN(above) ? used(inside) : above);
   return 1 / rootBetween((t) => used(t) - 1, inside, outside, used(inside) - 1, above - 1);
 }
 
@@ -147,8 +150,10 @@ function bySearch(used: (factor: number) => number, asIs: number): number {
   let value = asIs;
   if (asIs > 1) {
     for (let i = 0; i < WIDEST && value > 1; i++) {
+      const next = used(2 * met);
+      if (Number.isNaN(next)) break;
       met *= 2;
-      value = used(met);
+      value = next;
     }
     if (value > 1) {
       // no stiffer beam will do; an upward camber may still leave a window among the softer ones
@@ -173,7 +178,7 @@ function bySearch(used: (factor: number) => number, asIs: number): number {
     lacking /= 2;
     below = used(lacking);
   }
-  if (below <= 1) return alwaysMet(below);
+  if (!(below > 1)) return alwaysMet(Number.isNaN(below) ? used(met) : below);
   return rootBetween((factor) => used(factor) - 1, lacking, met, below - 1, used(met) - 1);
 }
 

@@ -66,6 +66,14 @@ test('clamped supports inside and at the ends: moments on either side', () => {
   }
 });
 
+test('the two faces of a release have their own lines', () => {
+  const loose = 1e-10 / Number.EPSILON; // the sliver beside the release, see influence.ts
+  const hinged = 'fixed 0; hinge 3; pin 7; EI value=1000';
+  for (const at of ['3-', '3+']) compare(hinged, 'slope', at, loose);
+  const slid = 'fixed 0; "shear release" 3; fixed 7; EI value=1000';
+  for (const at of ['3-', '3+']) compare(slid, 'deflection', at, loose);
+});
+
 test('beside a support on a foundation and under axial force', () => {
   // the sliver of 2^-40 of the beam beside the support leaves about 1e-12 of the result, times the steepness of the line
   const loose = 1e-10 / Number.EPSILON;
