@@ -2,7 +2,7 @@
  * What the commands need to know of the machine they run on. Plain Node without a dependency: on a bare clone nothing
  * is installed yet.
  */
-const { spawnSync } = require('node:child_process');
+const { spawn, spawnSync } = require('node:child_process');
 const fs = require('node:fs');
 const path = require('node:path');
 
@@ -25,6 +25,17 @@ function runTool(script, args, options = {}) {
   return run(process.execPath, [path.join(root, 'node_modules', script), ...args], {
     shell: false,
     ...options,
+  });
+}
+
+/** The same without waiting: resolves to its exit status and everything it said, so that two can run side by side. */
+function startTool(script, args) {
+  return new Promise((resolve, reject) => {
+    const child = spawn(process.execPath, [path.join(root, 'node_modules', script), ...args], { cwd: root });
+    let said = '';
+    for (const stream of [child.stdout, child.stderr]) stream.on('data', (part) => (said += part));
+    child.on('error', reject);
+    child.on('close', (status) => resolve({ status: status ?? 1, said }));
   });
 }
 
@@ -111,4 +122,5 @@ module.exports = {
   root,
   run,
   runTool,
+  startTool,
 };

@@ -8,3 +8,4 @@ export function ensureInstalled(): void;
 export function installationFault(): string | null;
 export function run(command: string, args: readonly string[], options?: object): number;
 export function runTool(script: string, args: readonly string[], options?: object): number;
+export function startTool(script: string, args: readonly string[]): Promise<{ status: number; said: string }>;

@@ -1,6 +1,6 @@
 /**
  * `npm test`: installs what is missing, then types, lint, format, build, and every test.
- *   npm test -- unit functions     only these kinds of test (and no other step than the build)
+ *   npm test -- unit functions     only these kinds of test, after a build if they need one
  * The last line is `N passed, N failed`, over all steps and tests; the exit status is 1 when anything failed.
  */
 import fs from 'node:fs';
@@ -9,19 +9,30 @@ import path from 'node:path';
 import { createRequire } from 'node:module';
 
 const require = createRequire(import.meta.url);
-const { HOW_TO_GET_CHROMIUM, ensureChromium, ensureInstalled, runTool } = require('./machine.cjs');
+const { HOW_TO_GET_CHROMIUM, ensureChromium, ensureInstalled, runTool, startTool } = require('./machine.cjs');
 
 const kinds = process.argv.slice(2);
 const whole = kinds.length === 0;
 const wantsBrowser = whole || kinds.includes('browser');
+/** These kinds look at dist/; the others run from the source. */
+const wantsBuild = whole || kinds.some((kind) => ['functions', 'workbench', 'browser'].includes(kind));
 const count = { passed: 0, failed: 0 };
 
-function step(name, work) {
+/** One step of the checks: its words are shown when it is done, since two steps run side by side. */
+async function step(name, tool, args = []) {
   const begun = Date.now();
-  console.log(`\n== ${name}`);
-  const good = work();
+  const { status, said } = await startTool(tool, args);
+  const good = status === 0;
   count[good ? 'passed' : 'failed'] += 1;
-  console.log(`== ${name}: ${good ? 'passed' : 'FAILED'} in ${((Date.now() - begun) / 1000).toFixed(1)} s`);
+  const words = said.trim() === '' ? '' : `${said.trimEnd()}\n`;
+  const seconds = ((Date.now() - begun) / 1000).toFixed(1);
+  console.log(`\n${words}== ${name}: ${good ? 'passed' : 'FAILED'} in ${seconds} s`);
+}
+
+async function sourceChecks() {
+  await step('types', 'typescript/bin/tsc', ['--noEmit', '-p', '.']);
+  await step('lint', 'eslint/bin/eslint.js', ['.', '--max-warnings=0']);
+  await step('format', 'prettier/bin/prettier.cjs', ['--check', '--log-level=warn', '.']);
 }
 
 function tests(env) {
@@ -55,12 +66,7 @@ function tests(env) {
 
 ensureInstalled();
 const chromium = wantsBrowser ? ensureChromium() : null;
-if (whole) {
-  step('types', () => runTool('typescript/bin/tsc', ['--noEmit', '-p', '.']) === 0);
-  step('lint', () => runTool('eslint/bin/eslint.js', ['.', '--max-warnings=0']) === 0);
-  step('format', () => runTool('prettier/bin/prettier.cjs', ['--check', '--log-level=warn', '.']) === 0);
-}
-step('build', () => runTool('webpack-cli/bin/cli.js', []) === 0);
+await Promise.all([wantsBuild && step('build', 'webpack-cli/bin/cli.js'), whole && sourceChecks()]);
 console.log('\n== tests');
 // a missing browser fails its tests, it does not skip them
 tests({ ...(chromium ? { CHROMIUM_PATH: chromium } : {}), SPANROW_NEED_BROWSER: '1' });
