@@ -21,7 +21,7 @@ interface Converted {
   readonly carried: Carried;
 }
 
-/** null: issues were added. */
+/** A name without a readable value becomes NaN, with an issue. */
 export function bind(plan: Plan, bindings: Bindings, issues: Issue[]): Bound {
   const { names } = plan;
   const env = new Array<number>(names.length + 1);

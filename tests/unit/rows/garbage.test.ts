@@ -1,6 +1,7 @@
 /** Random tables: never an exception; always issues with words, or a model of finite numbers that is valid by construction. */
 import fc from 'fast-check';
 import type { BeamModel } from '../../../src/beam/model';
+import type { Issue } from '../../../src/issue';
 import { say } from '../../../src/messages';
 import { compileTable, readBindings, readCombination, readLimit, readPosition } from '../../../src/rows';
 
@@ -157,6 +158,11 @@ function sane(model: BeamModel): void {
   }
 }
 
+/** The sentence without what it quotes of the user's own. */
+function ours(issue: Issue): string {
+  return say(issue).replace(/".*"/gs, '""');
+}
+
 function check(rows: unknown[][], names: unknown, values: unknown): 'model' | 'issues' {
   const compiled = compileTable(rows);
   for (const issue of compiled.issues) expect(say(issue).length).toBeGreaterThan(10);
@@ -168,7 +174,7 @@ function check(rows: unknown[][], names: unknown, values: unknown): 'model' | 'i
   const result = compiled.build(bindings.bindings);
   if (!result.ok) {
     expect(result.issues.length).toBeGreaterThan(0);
-    for (const issue of result.issues) expect(say(issue)).not.toMatch(/undefined|NaN|\[object|\?\./);
+    for (const issue of result.issues) expect(ours(issue)).not.toMatch(/undefined|NaN|\[object|\?\./);
     return 'issues';
   }
   sane(result.model);
@@ -183,7 +189,7 @@ test('random rows', () => {
     fc.property(table, fc.constantFrom<unknown>('4', 4, '4 kN/m', '4 m', true, ''), (rows, value) => {
       if (check(rows, [['L', 'q', 'b']], [[6, value, 2]]) === 'model') models += 1;
     }),
-    { numRuns: 1500 },
+    { seed: 20261201, numRuns: 1500 },
   );
   // The property would be empty if hardly any table got as far as a model.
   expect(models).toBeGreaterThan(100);
@@ -197,7 +203,7 @@ test('random cells of any kind', () => {
         check(rows, null, null);
       },
     ),
-    { numRuns: 500 },
+    { seed: 20261201, numRuns: 500 },
   );
 });
 
@@ -231,7 +237,7 @@ test('random text in one cell', () => {
         check([[text]], null, null);
       },
     ),
-    { numRuns: 800 },
+    { seed: 20261201, numRuns: 800 },
   );
 });
 
@@ -257,6 +263,6 @@ test('random arguments', () => {
       const bindings = readBindings(raw, raw);
       expect(bindings.ok || bindings.issues.length > 0).toBe(true);
     }),
-    { numRuns: 1000 },
+    { seed: 20261201, numRuns: 1000 },
   );
 });
