@@ -111,11 +111,20 @@ export class Book {
     return this.univer.__getInjector().get(IDefinedNamesService);
   }
 
-  /** Opens a snapshot in place of the open workbook and waits for its first calculation. */
+  /**
+   * Opens a snapshot in place of the open workbook and waits for its first calculation. The old one goes first: parts of the grid
+   * are registered once per workbook under one name. A snapshot that the engine refuses leaves the old workbook open.
+   */
   async open(snapshot: Partial<IWorkbookData>): Promise<void> {
-    const before = this.api.getActiveWorkbook()?.getId();
-    this.api.createWorkbook(snapshot);
-    if (before !== undefined && before !== this.id) this.api.disposeUnit(before);
+    const before = this.api.getActiveWorkbook();
+    const kept = before?.save();
+    if (before) this.api.disposeUnit(before.getId());
+    try {
+      this.api.createWorkbook(snapshot);
+    } catch (error) {
+      if (kept) this.api.createWorkbook(kept);
+      throw error;
+    }
     await this.settle();
   }
 

@@ -79,6 +79,13 @@ describeInBrowser('workbench', () => {
     throw new Error(`${address}: expected ${String(pattern)}, the status line says "${text}"`);
   }
 
+  /** Rests the pointer on a place of the grid, coming from elsewhere. */
+  async function hover(x: number, y: number): Promise<void> {
+    const grid = (await page.locator('#grid').boundingBox())!;
+    await page.mouse.move(grid.x + 200, grid.y + 700);
+    await page.mouse.move(grid.x + x, grid.y + y, { steps: 5 });
+  }
+
   async function save(): Promise<string> {
     const [download] = await Promise.all([page.waitForEvent('download'), page.click('#save')]);
     const file = path.join(folder, `${Date.now()}-${download.suggestedFilename()}`);
@@ -108,9 +115,7 @@ describeInBrowser('workbench', () => {
     const words = await expectStatus('E20', /pinn/);
     expect(words).toMatch(/row 3/i); // third row of the beam's range
     expect(words).toMatch(/Did you mean pin\?/);
-    const grid = (await page.locator('#grid').boundingBox())!;
-    await page.mouse.move(grid.x + 200, grid.y + 700);
-    await page.mouse.move(grid.x + 400, grid.y + 492, { steps: 5 }); // over E20
+    await hover(400, 492); // over E20
     await page
       .getByText(/pinn.*Did you mean pin/)
       .last()
@@ -172,6 +177,19 @@ describeInBrowser('workbench', () => {
     await openSheet('Canopy beam');
     expect(await expectStatus('E20', /^19\./)).toBe(value);
     expect(await page.locator('#notice').isHidden()).toBe(true); // nothing was lost, so nothing is said
+  });
+
+  test('in the workbook that was opened, errors have their words on hover too', async () => {
+    await openSheet('Canopy beam');
+    await type('B9', 'pinn');
+    await expectStatus('E20', /Row 4/);
+    await hover(400, 492);
+    await page
+      .getByText(/pinn.*Did you mean pin/)
+      .last()
+      .waitFor({ timeout: 10_000 });
+    await type('B9', 'pin');
+    await expectStatus('E20', /^19\./);
   });
 
   test('a file that is no workbook is refused in words and the open one stays', async () => {
