@@ -6,7 +6,7 @@
  * Everything is read through the port; what the pane cannot follow is said, not guessed.
  */
 import type { BeamArguments } from './engine';
-import { contains, intersect } from './address';
+import { contains, intersect, parseArea } from './address';
 import { columnOf, isItemRow } from './recognise';
 import { CannotFollow, evaluate, type Argument, type Place } from './formula/evaluate';
 import { findCalls, type BeamCall } from './formula/calls';
@@ -220,8 +220,22 @@ export class Follower {
           best = { area, one, index };
       }
     }
-    if (!best) return null;
+    if (!best) return this.member(cell, all);
     return this.open('rows', best.one.cell, best.one.formula, best.one.calls, best.index, best.one.cell);
+  }
+
+  /** A cell among the values of a template's member: that member, as the first formula that takes these values sees it. */
+  private async member(cell: Area, all: NonNullable<Follower['sheet']>['calls']): Promise<Found | null> {
+    for (const one of all) {
+      for (const [index, call] of one.calls.entries()) {
+        const node = call.args.values;
+        if (node?.kind !== 'reference') continue;
+        const area = parseArea(node.text, node.sheet ?? one.cell.sheet);
+        if (area && contains(area, cell))
+          return this.open('rows', one.cell, one.formula, one.calls, index, one.cell);
+      }
+    }
+    return null;
   }
 
   private around(cell: Area, block: Block): Found | null {

@@ -3,7 +3,7 @@
  * It talks to the workbook through the port alone and to the engine through its one door.
  */
 import './pane.css';
-import { overlaps } from './address';
+import { overlaps, shortAddress } from './address';
 import { Asker } from './ask-person';
 import { h, put } from './dom';
 import { Follower, type Found } from './follow';
@@ -17,6 +17,7 @@ import { AnswersView } from './view/answers';
 import { DrawingView } from './view/drawing-view';
 import { HeadView } from './view/head';
 import { MessagesView } from './view/messages';
+import { pictureButtons } from './view/picture-buttons';
 import { PlaceView } from './view/place-view';
 import { RowsView } from './view/rows-view';
 import { makeTabs } from './view/tabs';
@@ -73,7 +74,19 @@ class Pane {
       select: (area) => void port.select(area).catch(failed),
       canSelect: port.can('select'),
     });
-    this.drawing = new DrawingView(this.settings, h('div'));
+    const pictures = pictureButtons(port, {
+      drawing: () => this.drawing.current?.drawing ?? null,
+      name: () => {
+        const source = this.reviewed?.subject.source;
+        return source
+          ? `${texts.view.fileName} ${source.sheet} ${shortAddress(source).replace(':', '-')}`
+          : texts.view.fileName;
+      },
+      target: () => this.selection?.active ?? null,
+      say: (words) => this.announce(words),
+      failed,
+    });
+    this.drawing = new DrawingView(this.settings, pictures);
     this.rows = new RowsView(port, ask, {
       preview: (draft) => this.preview(draft),
       written: (words) => {

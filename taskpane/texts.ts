@@ -109,6 +109,8 @@ export const texts = {
     saveSvg: 'Save as SVG',
     savePng: 'Save as PNG',
     placePicture: 'Place in the sheet',
+    pictureDone: 'The drawing stands at the selected cell, with a description for those who cannot see it.',
+    fileName: 'beam',
   },
 
   answers: {
@@ -177,7 +179,7 @@ export const texts = {
     choices: (column: string) => `Choices for ${column}`,
     actions: {
       add: { label: 'Add', hint: 'Add a row below (Alt+Insert, or Enter in the last row)' },
-      copy: { label: 'Copy', hint: 'Duplicate this row' },
+      copy: { label: 'Copy', hint: 'Copy this row below itself' },
       up: { label: '↑', hint: 'Move this row up (Alt+Up arrow)' },
       down: { label: '↓', hint: 'Move this row down (Alt+Down arrow)' },
       remove: { label: 'Remove', hint: 'Remove this row (Alt+Delete)' },

@@ -88,6 +88,15 @@ function equation(left: Element, right: readonly Element[], unit: string, note =
   );
 }
 
+/** What acts in a region: only the polynomial w(s) has the unit of a line load. */
+function loadWords(load: string, unit: string): string {
+  if (load === '' || load === '0') return texts.working.none;
+  return load
+    .split('; ')
+    .map((part) => (/^[-+*\d.eE s^]+$/.test(part) ? `${part} ${unit}`.trim() : part))
+    .join('; ');
+}
+
 function coefficientsOf(curve: Curve): readonly number[] {
   return 'coefficients' in curve ? curve.coefficients : curve;
 }
@@ -203,13 +212,7 @@ export class WorkingView {
           h('dt', null, texts.working.stiffness),
           h('dd', null, `${work.stiffness} ${unitOf(model, 'stiffness')}`.trim()),
           h('dt', null, texts.working.load),
-          h(
-            'dd',
-            null,
-            work.load === '' || work.load === '0'
-              ? texts.working.none
-              : `${work.load} ${unit(`${force}/${metre}`)}`.trim(),
-          ),
+          h('dd', null, loadWords(work.load, unit(`${force}/${metre}`))),
         ),
         h('p', { class: 'sp-quiet' }, texts.working.law(model.axis === 1)),
         lines,

@@ -64,22 +64,22 @@ function host(
       application: { decimalSeparator: ',', thousandsSeparator: '.' },
       ...extra,
     },
-  } as never) as unknown as Record<string, unknown>;
-  const usedRange = new OfficeMockObject(used as never) as unknown as Record<string, unknown>;
+  }) as unknown as Record<string, unknown>;
+  const usedRange = new OfficeMockObject(used) as unknown as Record<string, unknown>;
   used['self'] = usedRange;
   usedRange['getUsedRangeOrNullObject'] = () => usedRange;
   usedRange['insert'] = (shift: string) => inserted.push(shift);
   const sheet = new OfficeMockObject({
     name: 'Beams',
     isNullObject: false,
-  } as never) as unknown as Record<string, unknown>;
+  }) as unknown as Record<string, unknown>;
   sheet['getRangeByIndexes'] = (...indexes: [number, number, number, number]) => (
     asked.push(indexes),
     usedRange
   );
   sheet['getUsedRangeOrNullObject'] = () => usedRange;
-  sheet['names'] = new OfficeMockObject({ getItemOrNullObject: () => missing } as never);
-  const missing = new OfficeMockObject({ isNullObject: true, type: '', value: '', formula: '' } as never);
+  sheet['names'] = new OfficeMockObject({ getItemOrNullObject: () => missing });
+  const missing = new OfficeMockObject({ isNullObject: true, type: '', value: '', formula: '' });
   const workbook = context['workbook'] as Record<string, unknown>;
   workbook['getSelectedRange'] = () => usedRange;
   workbook['getActiveCell'] = () => usedRange;

@@ -55,6 +55,8 @@ test('a template: names and values of that row', async () => {
   expect(one.args.names).toEqual([['L', 'w']]);
   expect(one.args.values).toEqual([[4, 3]]);
   expect(one.source?.sheet).toBe('Template');
+  // a cell among the values of a member shows that member
+  expect(subject(await at(port, 'B2')).args.values).toEqual([[4, 3]]);
 });
 
 test('a cell inside the rows follows the formula that uses them, without its x', async () => {
