@@ -40,7 +40,8 @@ export function conditionsOf(open: OpenBeam, works: readonly RegionWork[]): Cond
     const after = works[i];
     const left = before === undefined ? null : stateOf(open, before, before.to - before.from, factorOf);
     const right = after === undefined ? null : stateOf(open, after, 0, factorOf);
-    const here = left ?? (right as State);
+    const here = left ?? right;
+    if (here === null) return; // never: every place has a region on one side at least
     const support = model.supports.find((one) => one.at === x);
     const reaction = all.find((one) => one.at === x);
     const released = (kind: 'moment' | 'shear'): boolean =>

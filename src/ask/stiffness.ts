@@ -80,6 +80,7 @@ function factorFor(model: BeamModel, solution: Solution, tests: readonly Test[])
   if (!elastic && !imposed) return asIs > 0 ? asIs : alwaysMet(0);
 
   const usedAt = (factor: number): number => {
+    if (folds(model, factor) > MOST_FOLDS) return NaN;
     try {
       return governing(verdicts(model, solved(scaled(model, factor)), tests)).used;
     } catch (problem) {
@@ -92,6 +93,27 @@ function factorFor(model: BeamModel, solution: Solution, tests: readonly Test[])
     }
   };
   return elastic ? bySearch(usedAt, asIs) : byConvexity((t) => usedAt(1 / t), asIs);
+}
+
+/**
+ * A softened beam under axial force or on a foundation bends in ever shorter waves; past this many over its length it has become a string
+ * or a row of springs, its deflection no longer follows EI (by 1/2,000 at most), and a search there would only cost time: ever more regions.
+ */
+const MOST_FOLDS = 2000;
+
+/** e-folds of the homogeneous solution over the whole beam, with every EI multiplied by `factor`; all axial forces counted at full size. */
+function folds(model: BeamModel, factor: number): number {
+  let soft = Infinity;
+  for (const { law, from, to } of model.ei) {
+    const ends = law.kind === 'linear' ? [law.start, law.end] : [law.at(from), law.at(to)];
+    soft = Math.min(soft, ...ends);
+  }
+  let axial = 0;
+  for (const load of model.loads) if (load.kind === 'axial') axial += Math.abs(load.force);
+  let bed = 0;
+  for (const { stiffness } of model.foundations) bed = Math.max(bed, stiffness);
+  const ei = factor * soft;
+  return (model.end - model.start) * (Math.sqrt(axial / ei) + Math.sqrt(Math.sqrt(bed / ei)));
 }
 
 /** Whether a load of one of these kinds takes part in a combination that is tested. */

@@ -66,7 +66,7 @@ test('every combination and every subset of spans, by brute force, is inside and
       const open = beam(split, { combination: base + on.join('') });
       rows.forEach(([x], i) => {
         const left = rows[i + 1]?.[0] === x;
-        const value = ask.value(open, 'moment', left ? `${x}-` : (x as number)) as number;
+        const value = ask.value(open, 'moment', left ? `${x}-` : x) as number;
         low[i] = Math.min(low[i] as number, value);
         high[i] = Math.max(high[i] as number, value);
       });
