@@ -11,6 +11,8 @@ import { evaluateBundle, type FunctionsBundle } from './bundle';
 import { Book } from './book';
 import { createHost, type BlankCells } from './host';
 import { demoWorkbook } from './demo';
+import { createPort } from './port';
+import { createSignals } from './signals';
 import { switchOffColumnIndex } from './tuning';
 import { cellName } from './xlsx/address';
 import { callsSpanrow } from './xlsx/formula-text';
@@ -45,5 +47,14 @@ export function createHeadless(bundle: FunctionsBundle, options: HeadlessOptions
   return { book, dispose: () => univer.dispose() };
 }
 
-export { evaluateBundle, callsSpanrow, cellName, demoWorkbook, readXlsx, writeXlsx };
+export {
+  callsSpanrow,
+  cellName,
+  createPort,
+  createSignals,
+  demoWorkbook,
+  evaluateBundle,
+  readXlsx,
+  writeXlsx,
+};
 export type { Book, BlankCells, FunctionsBundle };
