@@ -199,7 +199,7 @@ function cutStretch(
       }
       for (const [load, shape] of pieces) {
         let map = shapes.get(load);
-        if (!map) shapes.set(load, (map = new Map()));
+        if (!map) shapes.set(load, (map = new Map<number, Poly>()));
         map.set(regions.length, shape);
       }
       const fitted = fPoly !== null || gPoly !== null || pieces.length > 0;

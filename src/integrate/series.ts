@@ -194,10 +194,10 @@ function run(
     m[next] = (h * (s[n]! - N * (vn + wn))) / next;
     s[next] = (h * (k * v[n]! - (n < q.length ? q[n]! : 0))) / next;
     const size = Math.max(
-      Math.abs(v[next]!),
-      h * Math.abs(t[next]!),
-      hM * Math.abs(m[next]!),
-      hS * Math.abs(s[next]!),
+      Math.abs(v[next]),
+      h * Math.abs(t[next]),
+      hM * Math.abs(m[next]),
+      hS * Math.abs(s[next]),
     );
     if (size > largest) largest = size;
     quiet = size <= NEGLIGIBLE * largest ? quiet + 1 : 0;
