@@ -97,9 +97,9 @@ function factorFor(model: BeamModel, solution: Solution, tests: readonly Test[])
 
 /**
  * A softened beam under axial force or on a foundation bends in ever shorter waves; past this many over its length it has become a string
- * or a row of springs, its deflection no longer follows EI (by 1/2,000 at most), and a search there would only cost time: ever more regions.
+ * or a row of springs, its deflection no longer follows EI (by 1/300 at most), and a search there would only cost time: ever more regions.
  */
-const MOST_FOLDS = 2000;
+const MOST_FOLDS = 300;
 
 /** e-folds of the homogeneous solution over the whole beam, with every EI multiplied by `factor`; all axial forces counted at full size. */
 function folds(model: BeamModel, factor: number): number {
