@@ -115,7 +115,7 @@ describeInBrowser('workbench', () => {
     const words = await expectStatus('E20', /pinn/);
     expect(words).toMatch(/row 3/i); // third row of the beam's range
     expect(words).toMatch(/Did you mean pin\?/);
-    await hover(400, 492); // over E20
+    await hover(450, 492); // over E20
     await page
       .getByText(/pinn.*Did you mean pin/)
       .last()
@@ -183,7 +183,7 @@ describeInBrowser('workbench', () => {
     await openSheet('Canopy beam');
     await type('B9', 'pinn');
     await expectStatus('E20', /Row 4/);
-    await hover(400, 492);
+    await hover(450, 492);
     await page
       .getByText(/pinn.*Did you mean pin/)
       .last()

@@ -37,7 +37,7 @@ export interface Member {
 
 const HEADER = ['Item', 'At', 'To', 'Value', 'End value', 'Unit', 'Case', 'Note'];
 const FIRST = 1; // column B: a narrow margin stands before it
-export const WIDTHS = [18, 132, 88, 74, 90, 92, 84, 84, 240];
+export const WIDTHS = [18, 162, 96, 86, 90, 92, 92, 84, 208];
 const NOTE_COLUMN = FIRST + 7;
 
 export function titleBlock(paper: Paper, title: string, mark: string, about: string): void {
@@ -111,7 +111,7 @@ export function memberSheet(member: Member): Paper {
     row += 1;
     if (head) {
       paper.line(row, FIRST, Array<Put>(HEADER.length).fill(null), 'head');
-      paper.height(row, 60);
+      paper.height(row, 76);
     }
     paper.put(row, FIRST, place(formula), head ? 'head' : 'plain');
     // number formats for the cells that the formula will spill into
