@@ -32,6 +32,9 @@ export interface Subject {
   readonly x: readonly unknown[];
   readonly limit: unknown;
   readonly quantity: string | null;
+  /** combinations and patterned cases of an ENVELOPE, raw; null for every other question */
+  readonly combinations: unknown;
+  readonly pattern: unknown;
   /** cells read for this beam, the rows first */
   readonly read: readonly Area[];
 }
@@ -124,6 +127,8 @@ export class Follower {
       const x = via === 'rows' ? null : ((await get('x')) ?? (await get('at')));
       const limit = via === 'rows' ? null : await get('limit');
       const quantity = via === 'rows' ? null : await get('quantity');
+      const combinations = via === 'rows' ? null : await get('combinations');
+      const pattern = via === 'rows' ? null : await get('pattern');
       const value = (argument: Argument | null): unknown => {
         if (!argument) return null;
         const single = argument.values.length === 1 && argument.values[0]?.length === 1;
@@ -148,6 +153,8 @@ export class Follower {
           x: x ? x.values.flat() : [],
           limit: value(limit),
           quantity: quantity ? String(value(quantity)) : ownQuantity(call.fn),
+          combinations: combinations?.values ?? null,
+          pattern: value(pattern),
           read: place.read,
         },
       };
@@ -271,6 +278,8 @@ function plainSubject(cell: Area, source: Area, block: Block): Subject {
     x: [],
     limit: null,
     quantity: null,
+    combinations: null,
+    pattern: null,
     read: [source],
   };
 }

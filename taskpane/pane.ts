@@ -3,19 +3,21 @@
  * It talks to the workbook through the port alone and to the engine through its one door.
  */
 import './pane.css';
-import { overlaps, shortAddress } from './address';
+import { addressFrom, overlaps, shortAddress } from './address';
 import { Asker } from './ask-person';
 import { h, put } from './dom';
-import { Follower, type Found } from './follow';
+import { Follower, type Found, type Subject } from './follow';
 import { PLAIN, formatNumber } from './numbers';
 import type { Area, Selection, Separators, Theme, Unsubscribe, WorkbookPort } from './port';
-import { reviewCells, reviewSubject, type Reviewed } from './review';
+import { NO_WISH, reviewCells, reviewSubject, type Reviewed, type Wish } from './review';
 import { toCells, type Draft } from './rows/draft';
 import { Settings, type Tab } from './settings';
 import { texts } from './texts';
 import { AnswersView } from './view/answers';
 import { DrawingView } from './view/drawing-view';
+import { makeHandles } from './view/handles';
 import { HeadView } from './view/head';
+import { LimitPicker } from './view/limit-picker';
 import { MessagesView } from './view/messages';
 import { pictureButtons } from './view/picture-buttons';
 import { PlaceView } from './view/place-view';
@@ -43,6 +45,7 @@ class Pane {
   private readonly messages = new MessagesView();
   private readonly drawing: DrawingView;
   private readonly answers = new AnswersView();
+  private readonly picker: LimitPicker;
   private readonly rows: RowsView;
   private readonly place: PlaceView;
   private readonly working = new WorkingView((words) => this.announce(words));
@@ -53,6 +56,7 @@ class Pane {
   private selection: Selection | null = null;
   private reviewed: Reviewed | null = null;
   private lost: Extract<Found, { kind: 'lost' }> | null = null;
+  private wish = NO_WISH;
   private held = false;
   /** the selected cell has no beam of its own: the last one stays, marked so */
   private kept = false;
@@ -86,9 +90,24 @@ class Pane {
       say: (words) => this.announce(words),
       failed,
     });
-    this.drawing = new DrawingView(this.settings, pictures);
+    this.drawing = new DrawingView(this.settings, pictures, (wish) => this.wishFor(wish));
+    this.picker = new LimitPicker({
+      try: (limit) => this.wishFor({ limit }),
+      add: (limit, note) => {
+        this.picker.reset();
+        this.wishFor({ limit: null });
+        this.rows.append({ Item: 'limit', Value: limit, Note: note });
+      },
+    });
+    this.drawing.overlay = (drawing, { model }) =>
+      makeHandles(drawing, this.rows.movables(), model.start, model.end, this.separators, {
+        preview: (movable, at) => this.rows.move(movable, at, false),
+        commit: (movable, at) => this.rows.move(movable, at, true),
+        cancel: () => this.show(),
+      });
     this.rows = new RowsView(port, ask, {
       preview: (draft) => this.preview(draft),
+      changed: () => this.drawing.refreshOverlay(),
       written: (words) => {
         this.announce(words);
         this.changed(null);
@@ -197,7 +216,7 @@ class Pane {
     if (found.kind === 'subject') {
       this.lost = null;
       if (!again) this.kept = false;
-      this.reviewed = reviewSubject(found.subject);
+      this.reviewed = this.reviewOf(found.subject);
     } else if (found.kind === 'lost') {
       this.lost = found;
       this.reviewed = null;
@@ -209,6 +228,25 @@ class Pane {
     }
     this.show();
     measure('spanrow:drawn', 'spanrow:selection');
+  }
+
+  private wishFor(change: Partial<Wish>): void {
+    this.wish = { ...this.wish, ...change };
+    if (!this.reviewed) return;
+    this.reviewed = reviewSubject(this.reviewed.subject, this.wish);
+    this.show();
+  }
+
+  /** A wish is for one beam: another one has other cases. */
+  private reviewOf(subject: Subject): Reviewed {
+    const now = this.reviewed?.subject.source;
+    const same = now && subject.source && addressFrom(now, null) === addressFrom(subject.source, null);
+    if (!same && this.wish !== NO_WISH) {
+      this.wish = NO_WISH;
+      this.drawing.clearWish();
+      this.picker.reset();
+    }
+    return reviewSubject(subject, this.wish);
   }
 
   // ---- showing
@@ -244,7 +282,8 @@ class Pane {
     const parts: (HTMLElement | null)[] = [];
     if (tab === 'place') parts.push(this.place.element, this.place.starts);
     else if (!beam) parts.push(this.empty, lost ? null : this.place.starts);
-    else if (tab === 'beam') parts.push(this.drawing.element, this.answers.element, this.head.readFrom);
+    else if (tab === 'beam')
+      parts.push(this.drawing.element, this.answers.element, this.picker.element, this.head.readFrom);
     else if (tab === 'rows') parts.push(this.drawing.element, this.rows.element);
     else parts.push(this.working.element);
     put(this.empty, lost ? null : h('p', null, texts.empty.title));
@@ -270,7 +309,7 @@ class Pane {
     const { reviewed } = this;
     if (!reviewed) return;
     const heading = draft.head > 0 ? (reviewed.subject.cells[0] ?? null) : null;
-    const next = reviewCells(reviewed.subject, toCells(draft, heading));
+    const next = reviewCells(reviewed.subject, toCells(draft, heading), this.wish);
     this.rows.say(next);
     this.messages.show(next, null, this.settings.tab === 'rows');
     if (next.drawing) this.drawing.show(next.drawing, this.separators, this.settings.tab === 'rows');

@@ -11,10 +11,11 @@ import {
   type ColumnName,
   type Issue,
   type OpenBeam,
+  type Quantity,
   type Response,
   type Review,
 } from './engine';
-import type { DrawingInput, LimitLine } from './drawing/frame';
+import { DIAGRAMS, type Band, type DrawingInput, type LimitLine } from './drawing/frame';
 import type { Subject } from './follow';
 import { texts } from './texts';
 
@@ -94,22 +95,72 @@ function limitLines(model: BeamModel, checks: readonly Check[]): LimitLine[] {
   });
 }
 
-export function reviewSubject(subject: Subject): Reviewed {
-  return reviewCells(subject, subject.cells);
+/** What the person asks of the shown beam beyond its formula: combinations to draw an envelope over (as typed, between semicolons), cases that act span by span, a limit. */
+export interface Wish {
+  readonly combinations: string;
+  readonly pattern: string;
+  /** a limit to try in place of the beam's own; null: none */
+  readonly limit: string | null;
+}
+
+export const NO_WISH: Wish = { combinations: '', pattern: '', limit: null };
+
+const BAND_POINTS = 61;
+
+/** Bands of all quantities; empty when nothing is wished. A wish that cannot be met is an issue. */
+function bandsOf(
+  subject: Subject,
+  cells: readonly (readonly unknown[])[],
+  wish: Wish,
+): { bands: NonNullable<DrawingInput['bands']>; issues: readonly Issue[] } {
+  const typed = wish.combinations
+    .split(/[;\n]/)
+    .map((text) => text.trim())
+    .filter((text) => text !== '');
+  const combinations: unknown = typed.length > 0 ? typed.map((text) => [text]) : subject.combinations;
+  const pattern: unknown = wish.pattern.trim() !== '' ? wish.pattern : subject.pattern;
+  if (combinations === null && (pattern === null || pattern === '')) return { bands: {}, issues: [] };
+  const { open } = reviewBeam({ ...subject.args, combination: null, beam: cells });
+  if (!open) return { bands: {}, issues: [] };
+  try {
+    const bands: Partial<Record<Quantity, Band>> = {};
+    for (const quantity of DIAGRAMS) {
+      const [, ...rows] = ask.envelope(open, quantity, combinations, pattern, BAND_POINTS);
+      bands[quantity] = {
+        x: rows.map((row) => Number(row[0])),
+        lowest: rows.map((row) => Number(row[1])),
+        highest: rows.map((row) => Number(row[2])),
+      };
+    }
+    return { bands, issues: [] };
+  } catch (problem) {
+    if (problem instanceof BeamProblem) return { bands: {}, issues: problem.issues };
+    throw problem;
+  }
+}
+
+export function reviewSubject(subject: Subject, wish: Wish = NO_WISH): Reviewed {
+  return reviewCells(subject, subject.cells, wish);
 }
 
 /** The same beam with other rows: a draft while it is typed. */
-export function reviewCells(subject: Subject, cells: readonly (readonly unknown[])[]): Reviewed {
+export function reviewCells(
+  subject: Subject,
+  cells: readonly (readonly unknown[])[],
+  wish: Wish = NO_WISH,
+): Reviewed {
   const review = reviewBeam({ ...subject.args, beam: cells });
   const { open } = review;
   const model = review.model;
   const issues: Issue[] = [...review.issues];
   let checks: Check[] = [];
   if (open) {
-    const found = checksOf(open, subject.limit);
+    const found = checksOf(open, wish.limit ?? subject.limit);
     checks = found.checks;
     issues.push(...found.issues);
   }
+  const envelope = open ? bandsOf(subject, cells, wish) : { bands: {}, issues: [] };
+  issues.push(...envelope.issues);
   const marks = model ? marksOf(subject, model) : [];
   const sketch = model ? null : sketchOf(subject, cells, review);
   const byRow = new Map<number, string[]>();
@@ -131,7 +182,7 @@ export function reviewCells(subject: Subject, cells: readonly (readonly unknown[
     open,
     model,
     drawing: model
-      ? drawingOf(review, model, open, marks, limitLines(model, checks))
+      ? { ...drawingOf(review, model, open, marks, limitLines(model, checks)), bands: envelope.bands }
       : (sketch?.drawing ?? null),
     checks,
     marks,

@@ -105,6 +105,11 @@ export const texts = {
     exaggerated: (factor: string) => `Deflection is drawn ${factor} times larger than the beam.`,
     reduced: (factor: string) => `Deflection is drawn at ${factor} of its true size.`,
     depth: 'The depth of the strip follows the bending stiffness.',
+    envelope: 'Envelope over',
+    combinationsHint: '1.35 G + 1.5 Q; G + W',
+    pattern: 'Span by span',
+    patternHint: 'cases, e.g. Q',
+    bands: 'The band behind each diagram is the envelope.',
     keys: 'Arrow keys move along the beam, Page Up and Page Down go to the next support, load or peak.',
     saveSvg: 'Save as SVG',
     savePng: 'Save as PNG',
@@ -143,6 +148,24 @@ export const texts = {
     selfCheck: 'Self-check',
     residuals: (equilibrium: string, conditions: string) =>
       `Equilibrium holds to ${equilibrium}, support conditions to ${conditions} of their own size.`,
+  },
+
+  limits: {
+    title: 'Published limits',
+    pick: 'Try a published limit',
+    none: 'the limits of the beam itself',
+    facts: (source: string, member: string, load: string) => `${source}: ${member}; load: ${load}.`,
+    status: {
+      seen: 'The value was read on a public page.',
+      memory: 'The value is recalled, not confirmed.',
+    },
+    confirm: 'Confirm with the code that governs.',
+    add: 'Add as a limit row',
+  },
+
+  handles: {
+    label: (row: number, item: string, column: string) => `Row ${row}, ${item}, ${column}`,
+    hint: 'Drag, or use the arrow keys; with Shift in steps ten times as large.',
   },
 
   working: {

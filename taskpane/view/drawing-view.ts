@@ -7,6 +7,7 @@ import { DIAGRAMS, type DrawingInput, type Part } from '../drawing/frame';
 import { PLAIN, formatNumber } from '../numbers';
 import type { Separators } from '../port';
 import type { Settings } from '../settings';
+import type { Wish } from '../review';
 import { texts } from '../texts';
 
 const WIDTH_LEAST = 240;
@@ -22,6 +23,7 @@ export class DrawingView {
   private separators: Separators = PLAIN;
   private crosshair: Crosshair | null = null;
   private drawn: Drawing | null = null;
+  private wishes: readonly HTMLInputElement[] = [];
   private width = 0;
   private measured = false;
   private readonly observer: ResizeObserver | null;
@@ -30,6 +32,8 @@ export class DrawingView {
     private readonly settings: Settings,
     /** more buttons under the options (export, place in the sheet) */
     extra: HTMLElement,
+    /** the person wishes an envelope */
+    private readonly wish: (wish: Pick<Wish, 'combinations' | 'pattern'>) => void,
   ) {
     this.choices = this.buildChoices(extra);
     this.element = h('div', { class: 'sp-figure' }, this.stage, this.notes, this.choices);
@@ -46,10 +50,34 @@ export class DrawingView {
     this.observer?.disconnect();
   }
 
+  /** Another beam has other cases. */
+  clearWish(): void {
+    for (const field of this.wishes) field.value = '';
+  }
+
   get current(): { input: DrawingInput; drawing: Drawing; separators: Separators } | null {
     return this.input && this.drawn
       ? { input: this.input, drawing: this.drawn, separators: this.separators }
       : null;
+  }
+
+  /** A layer over the sketch (handles), made anew for every drawing; null: none. */
+  overlay: ((drawing: Drawing, input: DrawingInput) => HTMLElement) | null = null;
+  private over: HTMLElement | null = null;
+
+  /** Makes the layer again over the drawing as it stands. */
+  refreshOverlay(): void {
+    const focused = this.over?.contains(document.activeElement)
+      ? document.activeElement?.getAttribute('aria-label')
+      : null;
+    this.over?.remove();
+    this.over =
+      this.beamOnly && this.drawn && this.input && this.overlay ? this.overlay(this.drawn, this.input) : null;
+    if (!this.over) return;
+    this.stage.append(this.over);
+    if (focused === null || focused === undefined) return;
+    const again = Array.from(this.over.children).find((one) => one.getAttribute('aria-label') === focused);
+    if (again instanceof HTMLElement) again.focus();
   }
 
   show(input: DrawingInput | null, separators: Separators, beamOnly: boolean): void {
@@ -97,7 +125,25 @@ export class DrawingView {
       this.crosshair = makeCrosshair(drawing, input, options, start, () => undefined);
       pieces.push(this.crosshair.element);
     }
-    put(this.stage, pieces);
+    // a handle that is being dragged must stay in the document: the drawing changes under it
+    const held = this.over?.matches(':active') || this.over?.querySelector(':active') ? this.over : null;
+    if (held && this.beamOnly) {
+      for (const old of Array.from(this.stage.children)) if (old !== held) old.remove();
+      held.before(...pieces);
+    } else {
+      const focused = this.over?.contains(document.activeElement)
+        ? document.activeElement?.getAttribute('aria-label')
+        : null;
+      put(this.stage, pieces);
+      this.over = null;
+      this.refreshOverlay();
+      const again = focused
+        ? Array.from(this.stage.querySelectorAll('.sp-handle')).find(
+            (one) => one.getAttribute('aria-label') === focused,
+          )
+        : null;
+      if (again instanceof HTMLElement) again.focus();
+    }
     if (hadFocus && this.crosshair) {
       this.crosshair.element.focus();
       if (kept !== null) this.crosshair.move(kept);
@@ -118,6 +164,7 @@ export class DrawingView {
       words.push(factor >= 1 ? texts.view.exaggerated(number) : texts.view.reduced(number));
     }
     if (drawing.beam?.drawing.varies) words.push(texts.view.depth);
+    if (Object.keys(this.input?.bands ?? {}).length > 0) words.push(texts.view.bands);
     return words;
   }
 
@@ -164,6 +211,16 @@ export class DrawingView {
         settings.momentBelow = below.checked;
       }),
     );
+    const field = (hint: string): HTMLInputElement =>
+      h('input', { type: 'text', class: 'sp-input', autocomplete: 'off', placeholder: hint });
+    const combinations = field(texts.view.combinationsHint);
+    const pattern = field(texts.view.patternHint);
+    this.wishes = [combinations, pattern];
+    for (const one of [combinations, pattern]) {
+      one.addEventListener('change', () =>
+        this.wish({ combinations: combinations.value, pattern: pattern.value }),
+      );
+    }
     return h(
       'details',
       { class: 'sp-fold' },
@@ -171,6 +228,8 @@ export class DrawingView {
       h('fieldset', { class: 'sp-set' }, h('legend', null, texts.view.show), boxes),
       h('label', { class: 'sp-line' }, h('span', null, texts.view.enlarge), large),
       h('label', { class: 'sp-choice' }, below, texts.view.below),
+      h('label', { class: 'sp-line' }, h('span', null, texts.view.envelope), combinations),
+      h('label', { class: 'sp-line' }, h('span', null, texts.view.pattern), pattern),
       h('p', { class: 'sp-quiet' }, texts.view.keys),
       extra,
     );

@@ -4,15 +4,32 @@ import { addressFrom } from '../address';
 import type { ColumnName } from '../engine';
 import type { Area, Separators, WorkbookPort } from '../port';
 import type { Reviewed } from '../review';
-import { makeDraft, type Draft } from '../rows/draft';
+import { insertRow, makeDraft, setCell, type Draft } from '../rows/draft';
 import { RowsEditor } from '../rows/editor';
 import { COLUMNS, guideOf } from '../rows/guide';
 import { rowsText } from '../rows/text-form';
 import { writeBack, type AskPerson } from '../rows/write-back';
 import { texts } from '../texts';
+import { textOf } from '../values';
+import type { Movable } from './handles';
+
+/** Items taken below the beam in the sketch. */
+const BELOW = new Set([
+  'pin',
+  'roller',
+  'fixed',
+  'guided',
+  'spring',
+  'rotational spring',
+  'foundation',
+  'settlement',
+  'rotation',
+]);
 
 export interface RowsEvents {
   preview(draft: Draft): void;
+  /** the editor shows other rows now */
+  changed(): void;
   written(words: string): void;
   failed(reason: unknown): void;
 }
@@ -110,6 +127,7 @@ export class RowsView {
           readOnly: false,
         });
         this.say(reviewed);
+        this.events.changed();
         const missing = COLUMNS.filter((name) => !this.columns.includes(name));
         this.explain(
           missing.length > 0 ? texts.rows.missing(missing.map((name) => texts.columns[name]).join(', ')) : '',
@@ -122,6 +140,51 @@ export class RowsView {
   /** Messages of a review, at their rows. */
   say(reviewed: Reviewed): void {
     this.editor.say(reviewed.byRow);
+  }
+
+  /** Adds a row at the end, by column name; false when the rows cannot be edited here. */
+  append(values: Partial<Record<ColumnName, unknown>>): boolean {
+    const { draft } = this.editor;
+    if (!draft || this.form === 'fixed') return false;
+    const row = this.columns.map((name) => ({
+      value: name === null ? null : (values[name] ?? null),
+      formula: '',
+    }));
+    this.editor.apply(insertRow(draft, draft.rows.length, row));
+    return true;
+  }
+
+  /** The positions that can be moved in the sketch: plain numbers in At and To of supports, releases, loads and the like. */
+  movables(): Movable[] {
+    const { draft } = this.editor;
+    if (!draft || this.form !== 'cells') return [];
+    const item = this.columns.indexOf('Item');
+    return draft.rows.flatMap((row, index) => {
+      const guide = guideOf(row[item]?.value);
+      if (!guide || guide.word === 'units' || guide.word === 'axis') return [];
+      return (['At', 'To'] as const).flatMap((name): Movable[] => {
+        const column = this.columns.indexOf(name);
+        const cell = row[column];
+        if (!cell || !guide.uses.includes(name) || cell.formula !== '' || typeof cell.value !== 'number')
+          return [];
+        const slot = draft.slots[index] ?? 0;
+        // 0 and 0 stand for the whole beam in a stretch: moving one end would change their meaning
+        const other = row[this.columns.indexOf(name === 'At' ? 'To' : 'At')]?.value;
+        if (guide.uses.includes('To') && cell.value === 0 && (other === 0 || textOf(other) === '')) return [];
+        const label = texts.handles.label(slot + 1, guide.word, texts.columns[name]);
+        return [{ slot, column, at: cell.value, label, below: BELOW.has(guide.word) }];
+      });
+    });
+  }
+
+  /** A position moved in the sketch: previewed while it moves, a step of the editor when it has arrived. */
+  move(movable: Movable, at: number, final: boolean): void {
+    const { draft } = this.editor;
+    const index = draft?.slots.indexOf(movable.slot) ?? -1;
+    if (!draft || index < 0) return;
+    const next = setCell(draft, index, movable.column, { value: at, formula: '' });
+    if (final) this.editor.apply(next);
+    else this.events.preview(next);
   }
 
   private explain(words: string): void {

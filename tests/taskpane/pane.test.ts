@@ -351,6 +351,87 @@ describe('place', () => {
   }, 30_000);
 });
 
+describe('more of the beam', () => {
+  const type2 = (element: HTMLInputElement, value: string): void => {
+    element.value = value;
+    element.dispatchEvent(new Event('change', { bubbles: true }));
+  };
+
+  test('the working: one region per stretch, its constants, and the conditions that fix them', async () => {
+    await open('L2', [...ROWS, ['point', 2, null, 9, null, 'kN', 'Q']], '=SPANROW.DEFLECTION(B4:I11, 3)');
+    tab('working');
+    const regions = Array.from(root.querySelectorAll('.sp-region > summary'), (one) => one.textContent);
+    expect(regions).toEqual([
+      'Region 1: 0 m to 2 m',
+      'Region 2: 2 m to 6 m',
+      'Conditions that fix the constants',
+    ]);
+    // left reaction 12·6/2 + 9·4/6 = 42 kN (statics), so M(s) = 42 s − 6 s²
+    const [first] = Array.from(root.querySelectorAll('.sp-equation'));
+    expect(first?.textContent?.replace(/\s/g, '')).toBe('M(s)=42s−6s2kN·m');
+    expect(root.querySelectorAll('math').length).toBeGreaterThan(10);
+  });
+
+  test('an envelope over typed combinations; a wrong one is explained; another beam forgets it', async () => {
+    await open('L2');
+    const [combinations] = Array.from(root.querySelectorAll<HTMLInputElement>('.sp-fold .sp-input'));
+    type2(combinations as HTMLInputElement, '1 Q; -0.5 Q');
+    expect(root.querySelectorAll('.sp-band').length).toBe(4);
+    type2(combinations as HTMLInputElement, '1 Z');
+    expect(words('.sp-wrong-box:not([hidden])')).toContain('Z');
+    port.fill('N1', [['pin 0; pin 6; EI value=100; uniform 0 6 2']]);
+    port.fill('L3', [['=SPANROW.DEFLECTION(N1, 3)']]);
+    port.selectCell('L3');
+    await settle();
+    expect((combinations as HTMLInputElement).value).toBe('');
+    expect(root.querySelectorAll('.sp-band').length).toBe(0);
+  });
+
+  test('an ENVELOPE formula draws its own band', async () => {
+    await open('L2');
+    port.fill('P1', [['Q'], ['-0.5 Q']]);
+    port.fill('L4', [['=SPANROW.ENVELOPE(B4:I10,"moment",P1:P2)']]);
+    port.selectCell('L4');
+    await settle();
+    expect(root.querySelectorAll('.sp-part-moment .sp-band').length).toBe(1);
+  });
+
+  test('a published limit is tried on the beam, shown with its source, and added as a row', async () => {
+    await open('L2', ROWS, '=SPANROW.DEFLECTION(B4:I14, 3)');
+    const select = root.querySelector('select[aria-label="Try a published limit"]') as HTMLSelectElement;
+    select.value = '0';
+    select.dispatchEvent(new Event('change'));
+    expect(words('.sp-answers')).toContain('span/360');
+    // 6000/360 = 16.67 mm allowed, 11.48 mm used: 68.9 %
+    expect(words('.sp-used')).toContain('68.9 %');
+    expect(words('.sp-panel')).toContain('Confirm with the code that governs.');
+    button('Add as a limit row').click();
+    await settle();
+    expect([port.valueAt('B11'), port.valueAt('E11')]).toEqual(['limit', 'span/360']);
+    expect(port.valueAt('I11')).toContain('IBC Table 1604.3');
+  });
+
+  test('a load is moved in the sketch by keys: its row follows, and undo brings it back', async () => {
+    await open('L2', [...ROWS, ['point', 2, null, 9, null, 'kN', 'Q']], '=SPANROW.DEFLECTION(B4:I11, 3)');
+    tab('rows');
+    await settle();
+    const handle = (): HTMLElement =>
+      root.querySelector('.sp-handle[aria-label="Row 8, point, At"]') as HTMLElement;
+    handle().focus();
+    press(handle(), 'ArrowRight', { shiftKey: true });
+    await settle();
+    expect(port.valueAt('C11')).toBe(2.6);
+    expect(document.activeElement).toBe(handle()); // the drawing is new, the focus is not lost
+    press(handle(), 'ArrowLeft');
+    await settle();
+    expect(port.valueAt('C11')).toBe(2.55);
+    button('Undo').click();
+    button('Undo').click();
+    await settle();
+    expect(port.valueAt('C11')).toBe(2);
+  });
+});
+
 test('tabs: arrow keys move, and the choice survives closing the pane', async () => {
   await open('L2');
   const first = root.querySelector('#sp-tab-beam') as HTMLElement;
