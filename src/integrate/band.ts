@@ -23,8 +23,21 @@ function take(size: number): Float64Array {
   return fresh;
 }
 
-/** One system at a time: making a second BandMatrix ends the life of the first. */
+let last: BandMatrix | null = null;
+
+/** One system at a time: asking for a second BandMatrix ends the life of the first. */
 export class BandMatrix {
+  /** A matrix of zeros; the members of a schedule have one shape, so the last one is used again when it fits. */
+  static zeros(n: number, kl: number, ku: number): BandMatrix {
+    if (last && last.n === n && last.kl === kl && last.ku === ku) {
+      last.a.fill(0);
+      return last;
+    }
+    const made = new BandMatrix(n, kl, ku);
+    last = made.a.length * 3 <= KEEP ? made : null;
+    return made;
+  }
+
   readonly n: number;
   readonly kl: number;
   readonly ku: number;
@@ -37,14 +50,15 @@ export class BandMatrix {
   private readonly lower: Float64Array;
   private readonly rhs: Float64Array;
   private readonly residual: Float64Array;
+  private readonly x: Float64Array;
 
-  constructor(n: number, kl: number, ku: number) {
+  private constructor(n: number, kl: number, ku: number) {
     this.n = n;
     this.kl = kl;
     this.ku = ku;
     this.width = kl + ku + 1 + kl;
     const size = n * this.width;
-    const all = take(2 * size + n * (kl + 4));
+    const all = take(2 * size + n * (kl + 5));
     let at = 0;
     const part = (length: number): Float64Array => all.subarray(at, (at += length));
     this.a = part(size);
@@ -54,6 +68,7 @@ export class BandMatrix {
     this.pivotRow = part(n);
     this.rhs = part(n);
     this.residual = part(n);
+    this.x = part(n);
   }
 
   set(row: number, column: number, value: number): void {
@@ -112,12 +127,13 @@ export class BandMatrix {
     return smallest;
   }
 
-  /** Solves in place for one right-hand side given in unscaled rows, with one step of refinement. Returns the largest residual relative to the largest row of terms. */
-  solve(b: Float64Array): number {
-    const { n, kl, ku, width, rowScale, original, rhs, residual } = this;
-    for (let r = 0; r < n; r++) rhs[r] = b[r]! * rowScale[r]!;
-    const x = b;
-    x.set(rhs);
+  /**
+   * Solves for one right-hand side b[at..at+n-1], given in unscaled rows, with one step of refinement; the solution takes its place.
+   * Returns the largest residual relative to the largest row of terms.
+   */
+  solve(b: number[], at: number): number {
+    const { n, kl, ku, width, rowScale, original, rhs, residual, x } = this;
+    for (let r = 0; r < n; r++) x[r] = rhs[r] = b[at + r]! * rowScale[r]!;
     this.substitute(x);
     let worst = 0;
     let scale = 0;
@@ -143,6 +159,7 @@ export class BandMatrix {
       this.substitute(residual);
       for (let r = 0; r < n; r++) x[r]! += residual[r]!;
     }
+    for (let r = 0; r < n; r++) b[at + r] = x[r]!;
     return scale > 0 ? worst / scale : 0;
   }
 

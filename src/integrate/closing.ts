@@ -15,7 +15,7 @@
 import type { BeamModel, Support } from '../beam/model';
 import { BandMatrix } from './band';
 import type { Columns } from './columns';
-import { particular, transfer } from './fields';
+import { carry, particular, transferMatrix } from './fields';
 import { noLoad } from './region-load';
 import type { Cut, Region } from './regions';
 
@@ -33,31 +33,34 @@ export interface Station {
 const MAX_SEGMENT_GROWTH = 1.5;
 
 export function findStations(model: BeamModel, cut: Cut): Station[] {
-  const supports = new Map<number, number>();
-  model.supports.forEach((s, i) => supports.set(s.at, i));
-  const releases = new Map<number, { hinge: boolean; slide: boolean }>();
-  for (const r of model.releases) {
-    const entry = releases.get(r.at) ?? { hinge: false, slide: false };
-    if (r.kind === 'moment') entry.hinge = true;
-    else entry.slide = true;
-    releases.set(r.at, entry);
-  }
+  const { supports, releases } = model;
   const stations: Station[] = [];
   const last = cut.breaks.length - 1;
   let growth = 0;
+  let support = 0;
+  let release = 0;
   for (let b = 0; b <= last; b++) {
     const x = cut.breaks[b]!;
-    const index = supports.get(x) ?? -1;
-    const release = b > 0 && b < last ? releases.get(x) : undefined;
+    // supports and releases are sorted, and every one of them is a break
+    const index = support < supports.length && supports[support]!.at === x ? support++ : -1;
+    let hinge = false;
+    let slide = false;
+    while (release < releases.length && releases[release]!.at <= x) {
+      if (b > 0 && b < last && releases[release]!.at === x) {
+        if (releases[release]!.kind === 'moment') hinge = true;
+        else slide = true;
+      }
+      release++;
+    }
     const ahead = b < last ? cut.regions[b]!.growth : 0;
     const grown = growth > 0 && growth + ahead > MAX_SEGMENT_GROWTH;
-    if (b === 0 || b === last || index >= 0 || release || grown) {
+    if (b === 0 || b === last || index >= 0 || hinge || slide || grown) {
       stations.push({
         at: b,
-        support: index >= 0 ? model.supports[index]! : null,
+        support: index >= 0 ? supports[index]! : null,
         supportIndex: index,
-        hinge: release?.hinge ?? false,
-        slide: release?.slide ?? false,
+        hinge,
+        slide,
       });
       growth = 0;
     }
@@ -69,71 +72,45 @@ export function findStations(model: BeamModel, cut: Cut): Station[] {
 export interface Closed {
   readonly stations: readonly Station[];
   /** state right of station i in column c at [(i*columns + c)*4 ..] */
-  readonly states: Float64Array;
+  readonly states: readonly number[];
   /** largest relative residual of the conditions over all columns */
   readonly conditions: number;
 }
 
-/** Propagates one column through the regions of a segment: y <- T y + p with the jumps at the breaks passed. */
-class Segment {
-  readonly T = new Float64Array(16);
-  readonly p: Float64Array;
-  constructor(columns: number) {
-    this.p = new Float64Array(4 * columns);
-  }
-}
-
-const scratch = new Float64Array(16);
-const vector = new Float64Array(4);
 const load = noLoad();
+const own = [0, 0, 0, 0];
 
-function buildSegment(
+/**
+ * A segment between two stations: its end state is T x (start state) + p. T (column by column) and p (per load column) are carried
+ * through the regions, with the jumps at the breaks passed.
+ */
+function carrySegment(
   regions: readonly Region[],
-  transfers: Float64Array,
+  matrices: Matrices,
   columns: Columns,
   axial: number,
   first: number,
   last: number,
-  segment: Segment,
+  T: number[],
+  p: number[],
 ): void {
-  const { T, p } = segment;
-  const C = columns.count;
-  for (let k = 0; k < 16; k++) T[k] = transfers[16 * first + k]!;
+  T.fill(0);
+  T[0] = T[5] = T[10] = T[15] = 1;
+  p.fill(0);
   for (let r = first; r < last; r++) {
-    const R = 16 * r;
-    if (r > first) {
-      // T <- R T
-      for (let i = 0; i < 4; i++) {
-        for (let j = 0; j < 4; j++) {
-          let sum = 0;
-          for (let k = 0; k < 4; k++) sum += transfers[R + 4 * i + k]! * T[4 * k + j]!;
-          scratch[4 * i + j] = sum;
-        }
-      }
-      T.set(scratch);
-    }
-    for (let c = 0; c < C; c++) {
+    const region = regions[r]!;
+    const matrix = matrices[r]!;
+    for (let j = 0; j < 16; j += 4) carry(region, matrix, T, j);
+    for (let c = 0; c < columns.count; c++) {
       const at = 4 * c;
       if (r > first) {
         addJump(columns, r, c, axial, 1, p, at);
-        const a = p[at]!;
-        const b = p[at + 1]!;
-        const m = p[at + 2]!;
-        const s = p[at + 3]!;
-        if (a !== 0 || b !== 0 || m !== 0 || s !== 0) {
-          for (let i = 0; i < 4; i++) {
-            const row = R + 4 * i;
-            p[at + i] =
-              transfers[row]! * a +
-              transfers[row + 1]! * b +
-              transfers[row + 2]! * m +
-              transfers[row + 3]! * s;
-          }
-        }
+        if (p[at] !== 0 || p[at + 1] !== 0 || p[at + 2] !== 0 || p[at + 3] !== 0)
+          carry(region, matrix, p, at);
       }
       if (columns.read(r, c, load)) {
-        particular(regions[r]!, axial, load, vector, 0);
-        for (let i = 0; i < 4; i++) p[at + i]! += vector[i]!;
+        particular(region, axial, load, own, 0);
+        for (let i = 0; i < 4; i++) p[at + i]! += own[i]!;
       }
     }
   }
@@ -148,7 +125,7 @@ export function addJump(
   c: number,
   axial: number,
   weight: number,
-  y: Float64Array,
+  y: number[],
   at: number,
 ): void {
   const jumps = columns.jumps;
@@ -160,11 +137,11 @@ export function addJump(
   y[at + 3]! += weight * jumps[j + 3]!;
 }
 
-/** Transfer matrices of all regions, 16 numbers each. */
-export function transfers(cut: Cut, axial: number): Float64Array {
-  const out = new Float64Array(16 * cut.regions.length);
-  cut.regions.forEach((region, r) => transfer(region, axial, out, 16 * r));
-  return out;
+/** Transfer matrix of each region, null where `carry` works without. */
+export type Matrices = readonly (readonly number[] | null)[];
+
+export function transferMatrices(cut: Cut, axial: number): Matrices {
+  return cut.regions.map((region) => transferMatrix(region, axial));
 }
 
 /** Nearest power of two: scaling by it rounds nothing. */
@@ -178,12 +155,14 @@ export function close(
   stations: readonly Station[],
   columns: Columns,
   axial: number,
-  matrices: Float64Array,
+  matrices: Matrices,
 ): Closed | null {
   const n = 4 * (stations.length - 1);
   const C = columns.count;
-  const band = new BandMatrix(n, 5, 5);
-  const rhs = new Float64Array(n * C);
+  const band = BandMatrix.zeros(n, 5, 5);
+  const rhs = new Array<number>(n * C).fill(0);
+  const T = new Array<number>(16).fill(0);
+  const p = new Array<number>(4 * C).fill(0);
 
   const length = powerOfTwo((model.end - model.start) / (stations.length - 1));
   const flexibility = powerOfTwo(meanFlexibility(cut));
@@ -204,7 +183,6 @@ export function close(
       : columns.jumps[j + component]!;
   };
 
-  const segment = new Segment(C);
   for (let i = 0; i < stations.length; i++) {
     const station = stations[i]!;
     const { support, hinge, slide } = station;
@@ -214,11 +192,7 @@ export function close(
     const clamped = support?.clamped ?? false;
     const k = held ? 0 : (support?.spring ?? 0);
     const kr = clamped ? 0 : (support?.rotationalSpring ?? 0);
-    const T = segment.T;
-    if (left) {
-      segment.p.fill(0);
-      buildSegment(cut.regions, matrices, columns, axial, stations[i - 1]!.at, station.at, segment);
-    }
+    if (left) carrySegment(cut.regions, matrices, columns, axial, stations[i - 1]!.at, station.at, T, p);
     /** One condition: sum over the left state (through T) and the right state of the coefficients = given(column). */
     const condition = (
       unit: number,
@@ -229,14 +203,14 @@ export function close(
       if (onLeft) {
         for (let j = 0; j < 4; j++) {
           let sum = 0;
-          for (let m = 0; m < 4; m++) if (onLeft[m] !== 0) sum += onLeft[m]! * T[4 * m + j]!;
+          for (let m = 0; m < 4; m++) if (onLeft[m] !== 0) sum += onLeft[m]! * T[4 * j + m]!;
           put(i - 1, j, sum, unit);
         }
       }
       if (onRight) for (let j = 0; j < 4; j++) put(i, j, onRight[j]!, unit);
       for (let c = 0; c < C; c++) {
         let value = given ? given(c) : 0;
-        if (onLeft) for (let m = 0; m < 4; m++) value -= onLeft[m]! * segment.p[4 * c + m]!;
+        if (onLeft) for (let m = 0; m < 4; m++) value -= onLeft[m]! * p[4 * c + m]!;
         rhs[c * n + row] = value / d[unit]!;
       }
       row++;
@@ -300,13 +274,10 @@ export function close(
 
   if (!(band.factor() > 0)) return null;
   let conditions = 0;
-  const states = new Float64Array(n * C);
-  for (let c = 0; c < C; c++) {
-    const x = rhs.subarray(c * n, (c + 1) * n);
-    conditions = Math.max(conditions, band.solve(x));
-    for (let i = 0; i + 1 < stations.length; i++) {
-      for (let j = 0; j < 4; j++) states[(i * C + c) * 4 + j] = x[4 * i + j]! * d[j]!;
-    }
+  for (let c = 0; c < C; c++) conditions = Math.max(conditions, band.solve(rhs, c * n));
+  const states: number[] = [];
+  for (let i = 0; i + 1 < stations.length; i++) {
+    for (let c = 0; c < C; c++) for (let j = 0; j < 4; j++) states.push(rhs[c * n + 4 * i + j]! * d[j]!);
   }
   return { stations, states, conditions };
 }

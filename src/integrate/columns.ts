@@ -15,20 +15,20 @@ export type Sorting = (load: Load) => { column: number; factor: number } | null;
 export class Columns {
   readonly count: number;
   /** qa, qb per region and column */
-  private readonly q: Float64Array | null;
+  private readonly q: number[] | null;
   private readonly qPoly: Map<number, Poly> | null = null;
-  private readonly kappa: Float64Array | null = null;
+  private readonly kappa: number[] | null = null;
   /** w, w1, w2 per region and column: initial shape (positive down) at the region's left end, its slope and the slope's rate */
-  private readonly shape: Float64Array | null = null;
+  private readonly shape: number[] | null = null;
   /** jumps of deflection, slope, moment and vertical force at each break, per column; null where nothing jumps */
-  readonly jumps: Float64Array | null = null;
+  readonly jumps: number[] | null = null;
   /** displacement and rotation of supports, per support and column */
-  readonly moved: Float64Array | null = null;
+  readonly moved: number[] | null = null;
 
   constructor(model: BeamModel, cut: Cut, count: number, sorting: Sorting) {
     this.count = count;
     const regions = cut.regions.length;
-    let q: Float64Array | null = null;
+    let q: number[] | null = null;
     for (const load of model.loads) {
       const sorted = sorting(load);
       if (!sorted) continue;
@@ -38,7 +38,7 @@ export class Columns {
         case 'couple':
         case 'kink':
         case 'offset': {
-          this.jumps ??= new Float64Array((regions + 1) * count * 4);
+          this.jumps ??= zeros((regions + 1) * count * 4);
           const at = (breakIndex(cut.breaks, load.at) * count + column) * 4;
           if (load.kind === 'point') this.jumps[at + 3]! -= factor * load.force;
           else if (load.kind === 'couple') this.jumps[at + 2]! += factor * load.couple;
@@ -61,7 +61,7 @@ export class Columns {
               this.qPoly.set(key, already ? sum(already, piece) : piece);
             }
           } else {
-            q ??= new Float64Array(regions * count * 2);
+            q ??= zeros(regions * count * 2);
             for (let r = first; r < last; r++) {
               const at = (r * count + column) * 2;
               q[at]! += factor * lawAt(load, cut.breaks[r]!);
@@ -71,7 +71,7 @@ export class Columns {
           break;
         }
         case 'curvature': {
-          this.kappa ??= new Float64Array(regions * count);
+          this.kappa ??= zeros(regions * count);
           const last = breakIndex(cut.breaks, load.to);
           for (let r = breakIndex(cut.breaks, load.from); r < last; r++) {
             this.kappa[r * count + column]! += factor * load.curvature;
@@ -80,7 +80,7 @@ export class Columns {
         }
         case 'camber': {
           // w(s) = -4 rise t (1 - t), t = (x - from)/(to - from): an upward parabola, so negative in y down
-          this.shape ??= new Float64Array(regions * count * 3);
+          this.shape ??= zeros(regions * count * 3);
           const length = load.to - load.from;
           const rise = factor * load.rise;
           const last = breakIndex(cut.breaks, load.to);
@@ -96,7 +96,7 @@ export class Columns {
         }
         case 'settlement':
         case 'rotation': {
-          this.moved ??= new Float64Array(model.supports.length * count * 2);
+          this.moved ??= zeros(model.supports.length * count * 2);
           const support = model.supports.findIndex((s) => s.at === load.at);
           const at = (support * count + column) * 2;
           if (load.kind === 'settlement') this.moved[at]! += factor * load.displacement;
@@ -139,7 +139,7 @@ export class Columns {
   }
 
   /** Adds weight x this column's load of region r to `load`. */
-  accumulate(r: number, weights: Float64Array, load: RegionLoad): void {
+  accumulate(r: number, weights: readonly number[], load: RegionLoad): void {
     load.qa = load.qb = load.kappa = load.w1 = load.w2 = 0;
     load.qPoly = null;
     for (let c = 0; c < this.count; c++) {
@@ -164,7 +164,7 @@ export class Columns {
   }
 
   /** Initial shape at the left end of region r: w, slope, rate of slope, weighted; null without camber. */
-  initialShape(r: number, weights: Float64Array): [number, number, number] | null {
+  initialShape(r: number, weights: readonly number[]): [number, number, number] | null {
     if (!this.shape) return null;
     const out: [number, number, number] = [0, 0, 0];
     for (let c = 0; c < this.count; c++) {
@@ -177,6 +177,10 @@ export class Columns {
   get hasShape(): boolean {
     return this.shape !== null;
   }
+}
+
+function zeros(count: number): number[] {
+  return new Array<number>(count).fill(0);
 }
 
 function sum(p: Poly, q: Poly): Poly {

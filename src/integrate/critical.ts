@@ -7,7 +7,8 @@
  * Counting pivots needs no eigenvectors and cannot overlook double roots.
  */
 import type { BeamModel } from '../beam/model';
-import { findStations, transfers } from './closing';
+import { findStations, transferMatrices } from './closing';
+import { carry } from './fields';
 import { cutBeam } from './regions';
 
 /** Number of critical loads passed at axial force `axial` (negative = compression); null when the beam cannot be cut. */
@@ -25,7 +26,7 @@ export function passedModes(model: BeamModel, axial: number): number | null {
   if (!result.ok) return null;
   const { cut } = result;
   const stations = findStations(model, cut);
-  const matrices = transfers(cut, axial);
+  const matrices = transferMatrices(cut, axial);
 
   // unknown displacements: one deflection and one rotation per station, two where a release parts them
   interface Dofs {
@@ -61,9 +62,10 @@ export function passedModes(model: BeamModel, axial: number): number | null {
       add(d.tLeft, d.tLeft, s.support.rotationalSpring);
     }
     if (i === 0) continue;
-    const of = (r: number): Float64Array => matrices.subarray(16 * r, 16 * r + 16);
-    let T = of(stations[i - 1]!.at);
-    for (let r = stations[i - 1]!.at + 1; r < s.at; r++) T = product(of(r), T);
+    const T = [1, 0, 0, 0, 0, 1, 0, 0, 0, 0, 1, 0, 0, 0, 0, 1];
+    for (let r = stations[i - 1]!.at; r < s.at; r++) {
+      for (let j = 0; j < 16; j += 4) carry(cut.regions[r]!, matrices[r]!, T, j);
+    }
     const k = elementStiffness(T);
     const before = dofs[i - 1]!;
     const map = [before.vRight, before.tRight, d.vLeft, d.tLeft];
@@ -104,24 +106,12 @@ function couple(
   if (i >= 0 && j >= 0) add(Math.min(i, j), Math.max(i, j), value);
 }
 
-function product(A: Float64Array, B: Float64Array): Float64Array {
-  const out = new Float64Array(16);
-  for (let i = 0; i < 4; i++) {
-    for (let j = 0; j < 4; j++) {
-      let sum = 0;
-      for (let k = 0; k < 4; k++) sum += A[4 * i + k]! * B[4 * k + j]!;
-      out[4 * i + j] = sum;
-    }
-  }
-  return out;
-}
-
 /**
  * Stiffness of a segment for (v, rotation) of both ends from its transfer matrix. Forces on the ends in the direction of the
  * displacements: (-S, M) at the left end, (S, -M) at the right end.
  */
-function elementStiffness(T: Float64Array): Float64Array {
-  const t = (i: number, j: number): number => T[4 * i + j]!;
+function elementStiffness(T: readonly number[]): Float64Array {
+  const t = (i: number, j: number): number => T[4 * j + i]!;
   // u1 = Tuu u0 + Tuf (M0, S0)  =>  (M0, S0) = Tuf^-1 (u1 - Tuu u0)
   const det = t(0, 2) * t(1, 3) - t(0, 3) * t(1, 2);
   const inverse = [t(1, 3) / det, -t(0, 3) / det, -t(1, 2) / det, t(0, 2) / det];

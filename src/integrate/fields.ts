@@ -19,24 +19,23 @@ import type { Region } from './regions';
 import { integrateSeries, seriesState } from './series';
 
 /** Order of a state vector everywhere in src/integrate: deflection, rotation, moment, vertical force. */
-export type State = Float64Array;
+export type State = number[];
 
 export function isCoupled(region: Region, axial: number): boolean {
   return axial !== 0 || region.k !== 0;
 }
 
-/** Fields from the state y[offset..offset+3] at the region's left end. */
+/** Fields from the state y at the region's left end. */
 export function integrateRegion(
   region: Region,
   axial: number,
   load: RegionLoad,
-  y: ArrayLike<number>,
-  offset = 0,
+  y: readonly number[],
 ): Fields {
-  const v0 = y[offset]!;
-  const t0 = y[offset + 1]!;
-  const m0 = y[offset + 2]!;
-  const s0 = y[offset + 3]!;
+  const v0 = y[0]!;
+  const t0 = y[1]!;
+  const m0 = y[2]!;
+  const s0 = y[3]!;
   if (isCoupled(region, axial)) return integrateSeries(region, axial, load, v0, t0, m0, s0);
   if (region.origin === 0) return prismatic(region, load, v0, t0, m0, s0);
   return varying(region, load, v0, t0, m0, s0);
@@ -78,13 +77,7 @@ function varying(region: Region, load: RegionLoad, v0: number, t0: number, m0: n
 }
 
 /** Writes the state at the region's right end caused by `load` alone (zero state at the left end) into out[at..at+3]. */
-export function particular(
-  region: Region,
-  axial: number,
-  load: RegionLoad,
-  out: Float64Array,
-  at: number,
-): void {
+export function particular(region: Region, axial: number, load: RegionLoad, out: number[], at: number): void {
   if (!isCoupled(region, axial) && region.origin === 0) {
     const { h, f, g } = region;
     const { qa, qb, kappa } = load;
@@ -97,7 +90,7 @@ export function particular(
   }
   const u = region.origin + 1;
   if (region.origin === 0) {
-    seriesState(region, axial, load, ZERO, u, out, at, 1);
+    seriesState(region, axial, load, ZERO, u, out, at);
     return;
   }
   const fields = integrateRegion(region, axial, load, ZERO);
@@ -109,35 +102,46 @@ export function particular(
 
 const ZERO = [0, 0, 0, 0];
 
-/** Writes the transfer matrix of a region (row-major 4x4) into T[at..]: state at the right end = T x state at the left, without load. */
-export function transfer(region: Region, axial: number, T: Float64Array, at: number): void {
-  const { h, f, g } = region;
+/** Transfer matrix of a region, column by column: state at the right end = T x state at the left. Null where `carry` needs none. */
+export function transferMatrix(region: Region, axial: number): number[] | null {
   const coupled = isCoupled(region, axial);
-  if (!coupled) {
-    T[at] = T[at + 5] = T[at + 10] = T[at + 15] = 1;
-    T[at + 1] = h;
-    T[at + 11] = h;
-    if (!region.fPoly && !region.gPoly) {
-      T[at + 6] = -h * f;
-      T[at + 2] = T[at + 7] = -0.5 * h * h * f;
-      T[at + 3] = (-h * h * h * f) / 6 + h * g;
-      return;
-    }
-  }
+  if (!coupled && !region.fPoly && !region.gPoly) return null;
+  const T = [1, 0, 0, 0, region.h, 1, 0, 0, 0, 0, 1, 0, 0, 0, region.h, 1];
   const none = noLoad();
   const u = region.origin + 1;
   const unit = [0, 0, 0, 0];
+  // without axial force and foundation the first two columns are those of a rigid piece
   for (let j = coupled ? 0 : 2; j < 4; j++) {
     unit.fill(0);
     unit[j] = 1;
     if (coupled && region.origin === 0) {
-      seriesState(region, axial, none, unit, u, T, at + j, 4);
+      seriesState(region, axial, none, unit, u, T, 4 * j);
       continue;
     }
     const fields = integrateRegion(region, axial, none, unit);
-    T[at + j] = evaluate(fields.v, u);
-    T[at + 4 + j] = evaluate(fields.t, u);
-    T[at + 8 + j] = evaluate(fields.M, u);
-    T[at + 12 + j] = evaluate(fields.S, u);
+    T[4 * j] = evaluate(fields.v, u);
+    T[4 * j + 1] = evaluate(fields.t, u);
+    T[4 * j + 2] = evaluate(fields.M, u);
+    T[4 * j + 3] = evaluate(fields.S, u);
+  }
+  return T;
+}
+
+/** Carries the state y[at..at+3] over a region without load, in place. */
+export function carry(region: Region, matrix: readonly number[] | null, y: number[], at: number): void {
+  const v = y[at]!;
+  const t = y[at + 1]!;
+  const m = y[at + 2]!;
+  const s = y[at + 3]!;
+  if (matrix === null) {
+    const { h, f, g } = region;
+    const hf = h * f;
+    y[at] = v + h * t - 0.5 * h * hf * m + (h * g - (h * h * hf) / 6) * s;
+    y[at + 1] = t - hf * m - 0.5 * h * hf * s;
+    y[at + 2] = m + h * s;
+    return;
+  }
+  for (let i = 0; i < 4; i++) {
+    y[at + i] = matrix[i]! * v + matrix[4 + i]! * t + matrix[8 + i]! * m + matrix[12 + i]! * s;
   }
 }

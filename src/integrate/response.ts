@@ -6,9 +6,9 @@
  */
 import type { BeamModel } from '../beam/model';
 import type { Peak, Piece, Quantity, Reaction, Residuals, Response, Sense, Side } from '../solution';
-import { addJump, type Closed } from './closing';
+import { addJump, type Closed, type Matrices } from './closing';
 import type { Columns } from './columns';
-import { integrateRegion, particular } from './fields';
+import { carry, integrateRegion, particular } from './fields';
 import { addScaled, bound, derivative, evaluate, rootsIn, type Poly } from './polynomial';
 import { noLoad } from './region-load';
 import type { Cut } from './regions';
@@ -19,11 +19,10 @@ export interface System {
   readonly cut: Cut;
   readonly columns: Columns;
   readonly axial: number;
-  /** transfer matrices, 16 numbers per region */
-  readonly matrices: Float64Array;
+  readonly matrices: Matrices;
   readonly closed: Closed;
   /** station index at the left of each region */
-  readonly segmentOf: Int32Array;
+  readonly segmentOf: readonly number[];
   readonly residuals: Residuals;
 }
 
@@ -40,20 +39,16 @@ interface Diagrams {
 
 export class BeamResponse implements Response {
   readonly residuals: Residuals;
-  private readonly states: Float64Array;
-  private readonly ready: Uint8Array;
-  private readonly diagrams: (Diagrams | undefined)[];
+  /** state at the left end of each region, once its segment has been carried through */
+  private readonly states: number[][] = [];
+  private readonly diagrams: (Diagrams | undefined)[] = [];
   private readonly load = noLoad();
-  private readonly end = new Float64Array(4);
+  private readonly own = [0, 0, 0, 0];
 
   constructor(
     readonly system: System,
-    private readonly weights: Float64Array,
+    private readonly weights: readonly number[],
   ) {
-    const regions = system.cut.regions.length;
-    this.states = new Float64Array(4 * regions);
-    this.ready = new Uint8Array(system.closed.stations.length);
-    this.diagrams = new Array<Diagrams | undefined>(regions);
     this.residuals = system.residuals;
   }
 
@@ -63,43 +58,37 @@ export class BeamResponse implements Response {
 
   /** Carries the state through the segment right of a station. */
   private prepare(segment: number): void {
-    if (this.ready[segment]) return;
-    this.ready[segment] = 1;
     const { closed, columns } = this.system;
     const C = columns.count;
     const first = closed.stations[segment]!.at;
+    if (this.states[first]) return;
     const last = closed.stations[segment + 1]!.at;
-    const y = this.end;
-    y.fill(0);
+    let y = [0, 0, 0, 0];
     for (let c = 0; c < C; c++) {
       const weight = this.weights[c]!;
       if (weight === 0) continue;
       for (let i = 0; i < 4; i++) y[i]! += weight * closed.states[(segment * C + c) * 4 + i]!;
     }
-    this.states.set(y, 4 * first);
+    this.states[first] = y;
     for (let r = first; r + 1 < last; r++) {
+      y = [y[0]!, y[1]!, y[2]!, y[3]!];
       this.step(r, y);
       this.jump(r + 1, y);
-      this.states.set(y, 4 * (r + 1));
+      this.states[r + 1] = y;
     }
   }
 
   /** y <- T y + p over region r */
-  private step(r: number, y: Float64Array): void {
+  private step(r: number, y: number[]): void {
     const { columns, cut, axial, matrices } = this.system;
-    const a = y[0]!;
-    const b = y[1]!;
-    const m = y[2]!;
-    const s = y[3]!;
+    const region = cut.regions[r]!;
+    carry(region, matrices[r]!, y, 0);
     columns.accumulate(r, this.weights, this.load);
-    particular(cut.regions[r]!, axial, this.load, y, 0);
-    for (let i = 0; i < 4; i++) {
-      const row = 16 * r + 4 * i;
-      y[i]! += matrices[row]! * a + matrices[row + 1]! * b + matrices[row + 2]! * m + matrices[row + 3]! * s;
-    }
+    particular(region, axial, this.load, this.own, 0);
+    for (let i = 0; i < 4; i++) y[i]! += this.own[i]!;
   }
 
-  private jump(b: number, y: Float64Array): void {
+  private jump(b: number, y: number[]): void {
     const { columns, axial } = this.system;
     if (!columns.jumps) return;
     for (let c = 0; c < columns.count; c++) {
@@ -108,26 +97,25 @@ export class BeamResponse implements Response {
   }
 
   /** State at the right end of region r (v, rotation, M, S), just left of the break. */
-  stateAtEnd(r: number): Float64Array {
-    this.prepare(this.system.segmentOf[r]!);
-    const y = this.states.slice(4 * r, 4 * r + 4);
+  private stateAtEnd(r: number): number[] {
+    const y = this.stateAtStart(r).slice();
     this.step(r, y);
     return y;
   }
 
-  stateAtStart(r: number): Float64Array {
+  private stateAtStart(r: number): readonly number[] {
     this.prepare(this.system.segmentOf[r]!);
-    return this.states.slice(4 * r, 4 * r + 4);
+    return this.states[r]!;
   }
 
   diagram(r: number): Diagrams {
     const known = this.diagrams[r];
     if (known) return known;
     const { columns, cut, axial } = this.system;
-    this.prepare(this.system.segmentOf[r]!);
+    const start = this.stateAtStart(r);
     const region = cut.regions[r]!;
     columns.accumulate(r, this.weights, this.load);
-    const fields = integrateRegion(region, axial, this.load, this.states, 4 * r);
+    const fields = integrateRegion(region, axial, this.load, start);
     let deflection = fields.v;
     let slope = fields.t;
     const w = columns.initialShape(r, this.weights);
@@ -265,7 +253,7 @@ export class BeamResponse implements Response {
       const b = station.at;
       const before = b > 0 ? this.stateAtEnd(b - 1) : ZERO;
       const after = b < lastBreak ? this.stateAtStart(b) : ZERO;
-      const act = new Float64Array(4);
+      const act = [0, 0, 0, 0];
       this.jump(b, act);
       const holdsForce = support.held || support.spring !== 0;
       const holdsCouple = support.clamped || support.rotationalSpring !== 0;
@@ -285,4 +273,4 @@ export class BeamResponse implements Response {
   }
 }
 
-const ZERO = new Float64Array(4);
+const ZERO = [0, 0, 0, 0];

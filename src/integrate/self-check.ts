@@ -5,16 +5,20 @@
  * Each residual is relative to the sum of the absolute values of its own terms, so it has no units.
  */
 import type { Residuals } from '../solution';
-import { integrateRegion } from './fields';
 import { addScaled, derivative, evaluate, multiply, productIntegral } from './polynomial';
 import { loadPolynomial, noLoad } from './region-load';
-import { BeamResponse, type System } from './response';
+import { addJump } from './closing';
+import { carry, integrateRegion, particular } from './fields';
+import type { System } from './response';
 
 /**
  * A solution whose residuals exceed this is refused. Double precision leaves about 1e-15 times the loss of digits of the problem; 1e-7
  * still means seven correct digits in the balance, far beyond any use, while a wrong solution misses by orders of magnitude more.
  */
 export const REFUSE = 1e-7;
+
+/** Products of tiny loads lose their digits to underflow; below this nothing can be said, and nothing is there. */
+const UNDERFLOW = 2 ** -960;
 
 class Balance {
   private sum = 0;
@@ -28,7 +32,7 @@ class Balance {
     this.size += Math.abs(size);
   }
   get residual(): number {
-    return this.size > 0 ? Math.abs(this.sum) / this.size : 0;
+    return this.size > UNDERFLOW ? Math.abs(this.sum) / this.size : 0;
   }
 }
 
@@ -37,10 +41,9 @@ export function selfCheck(system: System): Residuals {
   let equilibrium = 0;
   let energy = 0;
   let conditions = system.closed.conditions;
+  const reach = segmentsByStart(system);
   for (let c = 0; c < system.columns.count; c++) {
-    const weights = new Float64Array(system.columns.count);
-    weights[c] = 1;
-    const found = checkColumn(system, c, weights);
+    const found = checkColumn(system, c, reach);
     equilibrium = Math.max(equilibrium, found.equilibrium);
     energy = Math.max(energy, found.energy);
     conditions = Math.max(conditions, found.conditions);
@@ -57,7 +60,7 @@ class Joints {
   private readonly size = [0, 0, 0, 0];
   private motion = 0;
 
-  compare(a: readonly number[], b: Float64Array): void {
+  compare(a: readonly number[], b: readonly number[]): void {
     for (let i = 0; i < 4; i++) {
       this.gap[i] = Math.max(this.gap[i]!, Math.abs(a[i]! - b[i]!));
       this.size[i] = Math.max(this.size[i]!, Math.abs(b[i]!));
@@ -65,7 +68,7 @@ class Joints {
   }
 
   /** Sizes tied together through the length and flexibility of a segment: a zero component is only zero to rounding of the others. */
-  scale(y: Float64Array, ahead: { length: number; flexibility: number }): void {
+  scale(y: readonly number[], ahead: Reach): void {
     const { length: l, flexibility: f } = ahead;
     this.motion = Math.max(
       this.motion,
@@ -83,16 +86,22 @@ class Joints {
 
   get residual(): number {
     let worst = 0;
-    for (let i = 0; i < 4; i++) if (this.gap[i]! > 0) worst = Math.max(worst, this.gap[i]! / this.size[i]!);
+    for (let i = 0; i < 4; i++)
+      if (this.size[i]! > UNDERFLOW) worst = Math.max(worst, this.gap[i]! / this.size[i]!);
     return worst;
   }
 }
 
-/** For each break that is a station: length and mean flexibility of the segment to its right. */
-function segmentsByStart(system: System): ({ length: number; flexibility: number } | undefined)[] {
+/** Length and mean flexibility of the segment right of each station. */
+interface Reach {
+  readonly length: number;
+  readonly flexibility: number;
+}
+
+function segmentsByStart(system: System): Reach[] {
   const { stations } = system.closed;
   const { regions } = system.cut;
-  const out: ({ length: number; flexibility: number } | undefined)[] = [];
+  const out: Reach[] = [];
   for (let i = 0; i + 1 < stations.length; i++) {
     let length = 0;
     let bend = 0;
@@ -101,41 +110,50 @@ function segmentsByStart(system: System): ({ length: number; flexibility: number
       length += region.h;
       bend += region.h * (region.fPoly ? region.fPoly[0]! : region.f);
     }
-    out[stations[i]!.at] = { length, flexibility: bend / length };
+    out.push({ length, flexibility: bend / length });
   }
   return out;
 }
 
-function checkColumn(system: System, column: number, weights: Float64Array): Residuals {
-  const { cut, columns, axial, closed } = system;
+function checkColumn(system: System, column: number, reach: readonly Reach[]): Residuals {
+  const { cut, columns, axial, closed, matrices } = system;
   const { regions, breaks } = cut;
-  const response = new BeamResponse(system, weights);
+  const { stations, states } = closed;
+  const C = columns.count;
   const x0 = breaks[0]!;
   const force = new Balance();
   const moment = new Balance();
   const work = new Balance();
   const load = noLoad();
-  const supports = new Map(closed.stations.filter((s) => s.support).map((s) => [s.at, s]));
-  const reactions = response.reactions();
-  let nextReaction = 0;
-
-  const reach = segmentsByStart(system);
   const joints = new Joints();
+  const one = [1];
   const end = [0, 0, 0, 0];
+  const own = [0, 0, 0, 0];
+  /** states just left and just right of the break */
+  let left: number[] | null = null;
+  let right: number[] | null = null;
   let vStart = 0;
   let vEnd = 0;
+  let next = 0;
   for (let b = 0; b <= regions.length; b++) {
     const x = breaks[b]! - x0;
-    const left = b > 0 ? response.stateAtEnd(b - 1) : null;
-    const right = b < regions.length ? response.stateAtStart(b) : null;
+    const station = stations[next]!.at === b ? stations[next]! : null;
+    if (b === regions.length) right = null;
+    else if (station) {
+      const at = (next * C + column) * 4;
+      right = [states[at]!, states[at + 1]!, states[at + 2]!, states[at + 3]!];
+    } else {
+      right = left!.slice();
+      addJump(columns, b, column, axial, 1, right, 0);
+    }
     if (!left) vStart = right![0]!;
     if (!right) vEnd = left![0]!;
     const state = right ?? left!;
     force.weigh(state[3]!);
     moment.weigh(state[2]!);
     moment.weigh(axial * state[0]!);
-    if (left && b > 0) joints.compare(end, left);
-    const ahead = reach[b];
+    if (left) joints.compare(end, left);
+    const ahead = station && right ? reach[next]! : null;
     if (ahead) {
       joints.scale(state, ahead);
       // a beam that is only displaced holds moments of rounding size: eps times EI v / l^2. They are no error.
@@ -146,24 +164,35 @@ function checkColumn(system: System, column: number, weights: Float64Array): Res
       work.weigh((stiffness * v) / ahead.length);
     }
     // concentrated actions and reactions at this break
-    const j = columns.jumps ? (b * columns.count + column) * 4 : -1;
+    const j = columns.jumps ? (b * C + column) * 4 : -1;
     const offset = j >= 0 ? columns.jumps![j]! : 0;
     const kink = j >= 0 ? columns.jumps![j + 1]! : 0;
     let down = j >= 0 ? -columns.jumps![j + 3]! : 0;
     let couple = j >= 0 ? columns.jumps![j + 2]! : 0;
-    if (supports.has(b)) {
-      const reaction = reactions[nextReaction++]!;
-      down -= reaction.force;
-      couple += reaction.couple;
-      force.weigh(reaction.force);
-      moment.weigh(reaction.couple);
+    const opened = left && right ? right[0]! - left[0]! : 0;
+    if (station) {
+      next++;
+      const support = station.support;
+      if (support && (support.held || support.spring !== 0)) {
+        const reaction = (right ? right[3]! : 0) - (left ? left[3]! : 0) + down;
+        down -= reaction;
+        force.weigh(reaction);
+      }
+      if (support && (support.clamped || support.rotationalSpring !== 0)) {
+        const reaction =
+          (right ? right[2]! : 0) -
+          (left ? left[2]! : 0) -
+          couple +
+          axial * (station.slide ? opened : offset);
+        couple += reaction;
+        moment.weigh(reaction);
+      }
     }
     force.add(down);
     moment.add(down * x);
     moment.add(couple);
     const mean = (i: number): number =>
       left && right ? 0.5 * (left[i]! + right[i]!) : left ? left[i]! : right![i]!;
-    const opened = left && right ? right[0]! - left[0]! : 0;
     // halves that stand apart under axial force turn the couple N x opening: it works, but it is no load on the whole
     if (opened !== 0 && axial !== 0) couple -= axial * opened;
     work.add(down * mean(0));
@@ -176,6 +205,11 @@ function checkColumn(system: System, column: number, weights: Float64Array): Res
     const region = regions[b]!;
     columns.read(b, column, load);
     const fields = integrateRegion(region, axial, load, right!);
+    const arrived: number[] = right!.slice();
+    carry(region, matrices[b]!, arrived, 0);
+    particular(region, axial, load, own, 0);
+    for (let i = 0; i < 4; i++) arrived[i]! += own[i]!;
+    left = arrived;
     const o = region.origin;
     end[0] = evaluate(fields.v, o + 1);
     end[1] = evaluate(fields.t, o + 1);
@@ -185,7 +219,6 @@ function checkColumn(system: System, column: number, weights: Float64Array): Res
     const q = loadPolynomial(region, load);
     const soil = region.k !== 0 ? fields.v.map((a) => -region.k * a) : null;
     const net = soil ? addScaled(q, soil, 1) : q;
-    const one = [1];
     const lever = [x - h * o, h];
     const resultant = h * productIntegral(net, one, o);
     force.add(resultant);
@@ -196,8 +229,11 @@ function checkColumn(system: System, column: number, weights: Float64Array): Res
       moment.weigh(size * (x + h));
     }
     work.add(h * productIntegral(net, fields.v, o));
-    const bend = region.fPoly ? multiply(region.fPoly, fields.M) : fields.M.map((m) => m * region.f);
-    work.add(-h * productIntegral(bend, fields.M, o));
+    work.add(
+      region.fPoly
+        ? -h * productIntegral(multiply(region.fPoly, fields.M), fields.M, o)
+        : -h * region.f * productIntegral(fields.M, fields.M, o),
+    );
     if (load.kappa !== 0) work.add(-h * load.kappa * productIntegral(fields.M, one, o));
     if (axial !== 0) {
       // v' + w' along the region, and the shear strain v' - rotation
@@ -208,8 +244,11 @@ function checkColumn(system: System, column: number, weights: Float64Array): Res
       const strain = addScaled(incline, fields.t, -1);
       work.add(-h * productIntegral(strain, fields.S, o));
     } else if (region.gPoly || region.g !== 0) {
-      const strain = region.gPoly ? multiply(region.gPoly, fields.S) : fields.S.map((s) => s * region.g);
-      work.add(-h * productIntegral(strain, fields.S, o));
+      work.add(
+        region.gPoly
+          ? -h * productIntegral(multiply(region.gPoly, fields.S), fields.S, o)
+          : -h * region.g * productIntegral(fields.S, fields.S, o),
+      );
     }
   }
   if (axial !== 0) {

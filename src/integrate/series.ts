@@ -39,16 +39,15 @@ export function integrateSeries(
   return expand(region, axial, load, c[0]!, c[1]!, c[2]!, c[3]!);
 }
 
-/** Writes the state at u into out[at], out[at + stride], ... (v, rotation, M, S), from the state at u = 0 (origin-0 regions only). */
+/** Writes the state at u (v, rotation, M, S) into out[at..at+3], from the state at u = 0 (regions with origin 0 only). */
 export function seriesState(
   region: Region,
   axial: number,
   load: RegionLoad,
   start: readonly number[],
   u: number,
-  out: Float64Array,
+  out: number[],
   at: number,
-  stride: number,
 ): void {
   const n = run(region, axial, load, start[0]!, start[1]!, start[2]!, start[3]!);
   let a = 0;
@@ -62,9 +61,9 @@ export function seriesState(
     d = d * u + s[k]!;
   }
   out[at] = a;
-  out[at + stride] = b;
-  out[at + 2 * stride] = c;
-  out[at + 3 * stride] = d;
+  out[at + 1] = b;
+  out[at + 2] = c;
+  out[at + 3] = d;
 }
 
 const lefts = new WeakMap<Region, { axial: number; matrix: Float64Array }>();

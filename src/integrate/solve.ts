@@ -8,7 +8,7 @@
 import type { BeamModel } from '../beam/model';
 import { BeamProblem, type Issue } from '../issue';
 import type { Response, SolveResult, Solution } from '../solution';
-import { close, findStations, transfers } from './closing';
+import { close, findStations, transferMatrices } from './closing';
 import { Columns, type Sorting } from './columns';
 import { criticalLoad, passedModes } from './critical';
 import { findMechanism } from './mechanism';
@@ -37,11 +37,13 @@ function build(model: BeamModel, axial: number, count: number, sorting: Sorting)
   const { cut } = result;
   const columns = new Columns(model, cut, count, sorting);
   const stations = findStations(model, cut);
-  const matrices = transfers(cut, axial);
+  const matrices = transferMatrices(cut, axial);
   const closed = close(model, cut, stations, columns, axial, matrices);
   if (!closed) return { ok: false, issue: failed('conditions', Infinity) };
-  const segmentOf = new Int32Array(cut.regions.length);
-  for (let i = 0; i + 1 < stations.length; i++) segmentOf.fill(i, stations[i]!.at, stations[i + 1]!.at);
+  const segmentOf: number[] = [];
+  for (let i = 0; i + 1 < stations.length; i++) {
+    for (let r = stations[i]!.at; r < stations[i + 1]!.at; r++) segmentOf.push(i);
+  }
   const system = {
     model,
     cut,
@@ -75,8 +77,9 @@ class FirstOrder implements Solution {
     const key = factors ? factors.join(' ') : '';
     let response = this.known.get(key);
     if (!response) {
-      const weights = new Float64Array(this.system.columns.count).fill(1);
-      if (factors) weights.set(factors, 1);
+      // the loads that always act, then the cases
+      const weights = [1];
+      for (let c = 1; c < this.system.columns.count; c++) weights.push(factors ? (factors[c - 1] ?? 0) : 1);
       response = new BeamResponse(this.system, weights);
       if (this.known.size >= MAX_RESPONSES) this.known.clear();
       this.known.set(key, response);
@@ -114,7 +117,7 @@ class SecondOrder implements Solution {
     }
     const built = build(this.model, axial, 1, (load) => ({ column: 0, factor: factorOf(load.case) }));
     if (!built.ok) return refuse(built.issue);
-    const response = new BeamResponse(built.system, Float64Array.of(1));
+    const response = new BeamResponse(built.system, [1]);
     if (this.known.size >= MAX_RESPONSES) this.known.clear();
     this.known.set(key, response);
     return response;

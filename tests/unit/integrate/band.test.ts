@@ -7,8 +7,8 @@ const EPS = 2 ** -52;
 function errorOf(n: number, rowScale: (r: number) => number): number {
   const random = seeded(n);
   const rows: number[][] = [];
-  const band = new BandMatrix(n, 5, 5);
-  const b = new Float64Array(n);
+  const band = BandMatrix.zeros(n, 5, 5);
+  const b = new Array<number>(n).fill(0);
   for (let r = 0; r < n; r++) {
     rows.push([]);
     for (let c = Math.max(0, r - 5); c <= Math.min(n - 1, r + 5); c++) {
@@ -19,7 +19,7 @@ function errorOf(n: number, rowScale: (r: number) => number): number {
     }
   }
   expect(band.factor()).toBeGreaterThan(0);
-  const residual = band.solve(b);
+  const residual = band.solve(b, 0);
   // backward stable: the residual is a few roundings of the terms of a row
   expect(residual).toBeLessThanOrEqual(16 * EPS);
   let worst = 0;
@@ -29,13 +29,13 @@ function errorOf(n: number, rowScale: (r: number) => number): number {
 
 describe('band elimination', () => {
   test('needs interchanges: a zero on the diagonal', () => {
-    const band = new BandMatrix(2, 5, 5);
+    const band = BandMatrix.zeros(2, 5, 5);
     band.set(0, 1, 2);
     band.set(1, 0, 4);
-    const b = Float64Array.of(6, 8);
+    const b = [6, 8];
     expect(band.factor()).toBeGreaterThan(0);
-    band.solve(b);
-    expect([...b]).toEqual([2, 3]);
+    band.solve(b, 0);
+    expect(b).toEqual([2, 3]);
   });
 
   test('random systems; rows 1e±12 apart make no difference', () => {
@@ -46,13 +46,13 @@ describe('band elimination', () => {
   });
 
   test('a singular system says so', () => {
-    const band = new BandMatrix(2, 5, 5);
+    const band = BandMatrix.zeros(2, 5, 5);
     band.set(0, 0, 1);
     band.set(0, 1, 2);
     band.set(1, 0, 2);
     band.set(1, 1, 4);
     expect(band.factor()).toBe(0);
-    const empty = new BandMatrix(2, 5, 5);
+    const empty = BandMatrix.zeros(2, 5, 5);
     empty.set(0, 0, 1);
     expect(empty.factor()).toBe(0);
   });

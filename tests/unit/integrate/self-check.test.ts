@@ -62,7 +62,8 @@ describe('self-check', () => {
     'a wrong constant of integration (component %i) is noticed in every span',
     (component) => {
       const system = systemOf(busy());
-      const { states, stations } = system.closed;
+      const { stations } = system.closed;
+      const states = system.closed.states as number[];
       for (let i = 0; i + 1 < stations.length; i++) {
         const at = 4 * i + component;
         const kept = states[at]!;
