@@ -72,7 +72,7 @@ const exponents = (from: number, to: number, step: number): number[] => {
 };
 
 describe('tension, simple span, uniform load: M = (w/N)(1 - 1/cosh(u/2)), u = L sqrt(N/EI) (Timoshenko & Gere, ch. 1)', () => {
-  test.each(exponents(-22, 9, 0.5))('N = 1e%d', (power) => {
+  test.each(exponents(-22, 8, 0.5))('N = 1e%d', (power) => {
     const N = new D(10 ** power);
     const got = answer(beam(simple, [uniform, { ...own, kind: 'axial', force: 10 ** power }]));
     const moment = new D(1).minus(new D(1).div(N.sqrt().div(2).cosh())).div(N);
