@@ -6,11 +6,15 @@ import './pane.css';
 import { addressFrom, overlaps, shortAddress } from './address';
 import { Asker } from './ask-person';
 import { h, put } from './dom';
+import { draw } from './drawing/drawing';
+import { exportPng } from './drawing/export';
+import { DIAGRAMS } from './drawing/frame';
 import { Follower, type Found, type Subject } from './follow';
 import { PLAIN, formatNumber } from './numbers';
 import type { Area, Selection, Separators, Theme, Unsubscribe, WorkbookPort } from './port';
 import { NO_WISH, reviewCells, reviewSubject, type Reviewed, type Wish } from './review';
 import { toCells, type Draft } from './rows/draft';
+import { makeRecord } from './place/record';
 import { Settings, type Tab } from './settings';
 import { texts } from './texts';
 import { AnswersView } from './view/answers';
@@ -28,6 +32,9 @@ import { WorkingView } from './view/working';
 export interface MountedPane {
   dispose(): void;
 }
+
+/** px of the drawing on a record sheet: the text width of a portrait page at 96 px an inch, less its margins */
+const RECORD_WIDTH = 640;
 
 /** Mounts the pane into an element and starts following the selection. */
 export function mountPane(container: HTMLElement, port: WorkbookPort): MountedPane {
@@ -298,6 +305,10 @@ class Pane {
     const at = reviewed?.marks[0] ?? reviewed?.model?.start ?? 0;
     this.place.show({
       subject: reviewed?.subject ?? null,
+      record:
+        reviewed?.open && this.port.addSheet && this.port.can('addSheet')
+          ? (paper) => this.record(paper)
+          : null,
       cases: reviewed?.model?.cases ?? [],
       target: selection?.active ?? null,
       x: formatNumber(at, PLAIN, 6),
@@ -321,6 +332,41 @@ class Pane {
     const { selection } = this;
     if (selection && overlaps(area, selection.active)) this.held = false;
     this.changed(area);
+  }
+
+  /** A sheet of its own, so nothing can be in the way. */
+  private async record(paper: 'a4' | 'letter'): Promise<void> {
+    const { port, reviewed } = this;
+    if (!reviewed?.drawing || !port.addSheet) return;
+    const pictures = port.addPicture !== undefined && port.can('pictures');
+    const made = makeRecord(reviewed, port.today(), pictures);
+    if (!made) {
+      this.announce(texts.record.noAnswer);
+      return;
+    }
+    const sheet = await port.addSheet(texts.record.sheet);
+    const area = { sheet, row: 0, column: 0, rows: made.cells.length, columns: made.cells[0]?.length ?? 1 };
+    await port.write([{ area, cells: made.cells }], { label: texts.record.make });
+    if (pictures && port.addPicture) {
+      const drawing = draw(reviewed.drawing, {
+        width: RECORD_WIDTH,
+        parts: ['beam', ...DIAGRAMS],
+        momentBelow: this.settings.momentBelow,
+        enlarged: null,
+        separators: this.separators,
+      });
+      const at = { sheet, row: made.drawingRow, column: 0, rows: 1, columns: 1 };
+      const words = drawing.root.getAttribute('aria-label') ?? '';
+      await port.addPicture(
+        at,
+        await exportPng(drawing, 3),
+        words,
+        drawing.width * 0.75,
+        drawing.height * 0.75,
+      );
+    }
+    if (port.setPrint && port.can('print')) await port.setPrint(area, paper);
+    this.announce(texts.record.done(sheet));
   }
 
   private announce(words: string): void {

@@ -168,6 +168,37 @@ export const texts = {
     hint: 'Drag, or use the arrow keys; with Shift in steps ten times as large.',
   },
 
+  record: {
+    heading: 'Record',
+    explain:
+      'A new sheet with the rows, how they were read, the drawing where the host takes pictures, reactions, largest values, checks, the working and the cautions, as plain values of today.',
+    make: 'Make a record sheet',
+    sheet: 'Beam record',
+    done: (sheet: string) => `The record stands on the sheet "${sheet}".`,
+    noAnswer: 'There is nothing to record: the beam has no answer yet.',
+    paper: 'Paper',
+    a4: 'A4',
+    letter: 'Letter',
+    title: 'Beam calculation record',
+    beam: 'Beam rows from',
+    askedIn: 'Asked in',
+    combination: 'Combination',
+    date: 'Date',
+    version: 'Spanrow version',
+    rows: 'Beam rows',
+    read: 'How the rows were read',
+    drawing: 'Drawing',
+    reactions: 'Reactions',
+    extremes: 'Largest values',
+    checks: 'Deflection limits',
+    working: 'Working',
+    quantity: 'quantity',
+    unit: 'unit',
+    lowest: 'lowest',
+    highest: 'highest',
+    at: 'at',
+  },
+
   working: {
     intro: (down: boolean, combination: string) =>
       `Double integration with y ${down ? 'down' : 'up'}, region by region; s is measured from the left end of each region.${combination === '' ? '' : ` Combination ${combination}.`}`,

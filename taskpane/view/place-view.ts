@@ -17,6 +17,8 @@ const AT_X = new Set<string>(['DEFLECTION', 'SLOPE', 'MOMENT', 'SHEAR', 'REACTIO
 
 export interface PlaceContext {
   readonly subject: Subject | null;
+  /** makes a record of the shown beam; null: there is nothing to record or no place to put it */
+  readonly record: ((paper: 'a4' | 'letter') => Promise<void>) | null;
   readonly cases: readonly string[];
   readonly target: Area | null;
   /** a position to start from: where the crosshair or the formula stands */
@@ -71,7 +73,8 @@ export class PlaceView {
   readonly element = h('div', { class: 'sp-place' });
   /** the starting points alone, for a pane without a beam */
   readonly starts: HTMLElement;
-  private context: PlaceContext = { subject: null, cases: [], target: null, x: '0' };
+  private context: PlaceContext = { subject: null, record: null, cases: [], target: null, x: '0' };
+  private readonly recordBlock: HTMLElement;
   private readonly answer: HTMLSelectElement;
   private readonly x: HTMLInputElement;
   private readonly combination: HTMLInputElement;
@@ -118,6 +121,7 @@ export class PlaceView {
     for (const field of [this.answer, this.x, this.combination])
       field.addEventListener('input', () => this.refresh());
     this.starts = this.buildStarts();
+    this.recordBlock = this.buildRecord();
     put(
       this.element,
       h(
@@ -132,6 +136,7 @@ export class PlaceView {
         this.hint,
         this.put,
       ),
+      this.recordBlock,
     );
     this.refresh();
   }
@@ -158,6 +163,7 @@ export class PlaceView {
 
   private refresh(): void {
     const { subject, target } = this.context;
+    this.recordBlock.hidden = this.context.record === null;
     this.xLine.hidden = !AT_X.has(this.answer.value);
     this.combinationLine.hidden = this.answer.value === 'READBACK';
     const inside = subject?.source && target ? overlaps(subject.source, target) : false;
@@ -168,6 +174,30 @@ export class PlaceView {
     this.hint.hidden = this.hint.textContent === '';
     this.put.disabled = formula === null || inside;
     this.put.textContent = target ? texts.place.put(addressFrom(target, target.sheet)) : texts.place.putHere;
+  }
+
+  private buildRecord(): HTMLElement {
+    const paper = h(
+      'select',
+      { class: 'sp-select' },
+      h('option', { value: 'a4' }, texts.record.a4),
+      h('option', { value: 'letter' }, texts.record.letter),
+    );
+    const make = (): void => {
+      this.context
+        .record?.(paper.value === 'letter' ? 'letter' : 'a4')
+        .catch((reason: unknown) => this.failed(reason));
+    };
+    const line = h('label', { class: 'sp-line' }, h('span', null, texts.record.paper), paper);
+    line.hidden = !this.port.can('print');
+    return h(
+      'section',
+      { class: 'sp-block' },
+      h('h2', null, texts.record.heading),
+      h('p', { class: 'sp-quiet' }, texts.record.explain),
+      line,
+      h('button', { type: 'button', class: 'sp-button', click: make }, texts.record.make),
+    );
   }
 
   private async putFormula(): Promise<void> {

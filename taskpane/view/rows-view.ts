@@ -13,6 +13,9 @@ import { texts } from '../texts';
 import { textOf } from '../values';
 import type { Movable } from './handles';
 
+/** Items that are not moved in the sketch: settings, and sections, whose ends would lie on top of the loads'. */
+const STILL = new Set(['units', 'axis', 'limit', 'E', 'I', 'EI', 'GA']);
+
 /** Items taken below the beam in the sketch. */
 const BELOW = new Set([
   'pin',
@@ -161,7 +164,7 @@ export class RowsView {
     const item = this.columns.indexOf('Item');
     return draft.rows.flatMap((row, index) => {
       const guide = guideOf(row[item]?.value);
-      if (!guide || guide.word === 'units' || guide.word === 'axis') return [];
+      if (!guide || STILL.has(guide.word)) return [];
       return (['At', 'To'] as const).flatMap((name): Movable[] => {
         const column = this.columns.indexOf(name);
         const cell = row[column];

@@ -310,6 +310,38 @@ describe('place', () => {
     expect(words('.sp-code')).toBe('=SPANROW.MOMENT(Beams!$B$4:$I$10, "3-", "1.5 Q")');
   });
 
+  test('a record sheet holds rows, reading, reactions, extremes, working, date, version and cautions', async () => {
+    await open('L2', [...ROWS, ['limit', null, null, 'span/360']], '=SPANROW.DEFLECTION(B4:I11, 3)');
+    port.abilities.add('addSheet');
+    const sheets = port.sheets;
+    Object.assign(port, {
+      addSheet: (name: string) => {
+        sheets.set(name, new Map());
+        return Promise.resolve(name);
+      },
+    });
+    tab('place');
+    port.selectCell('L2');
+    await settle();
+    button('Make a record sheet').click();
+    await settle();
+    const found = Array.from(sheets.get('Beam record')?.values() ?? [], (cell) => cell.value);
+    for (const words of [
+      'Beam calculation record',
+      'Beams!B4:I11',
+      '1 Jan 2030',
+      'Reactions',
+      'Largest values',
+      'Working',
+      'within',
+    ]) {
+      expect(found).toContain(words);
+    }
+    expect(found.some((value) => String(value).includes('qualified engineer'))).toBe(true);
+    expect(found).toContain(36); // the reaction wL/2
+    expect(words('.sp-status')).toContain('Beam record');
+  });
+
   test('the answer cannot be put into the rows it is about', async () => {
     await open('L2');
     tab('place');
