@@ -224,6 +224,56 @@ describeInBrowser('the side pane in the workbench', () => {
     await page.locator('[role=alertdialog] button', { hasText: 'Cancel' }).click();
   });
 
+  test('a load dragged in the sketch: its row and the sheet follow', async () => {
+    await start(450, 'light', 'rows');
+    await openSheet('Canopy beam');
+    await goTo('E20');
+    await title('B6:I17');
+    const handle = page.locator('.sp-handle[aria-label="Row 8, point, At"]');
+    const from = await handle.boundingBox();
+    const sketch = await page.locator('.sp-stage').boundingBox();
+    if (!from || !sketch) throw new Error('no sketch');
+    const y = from.y + from.height / 2;
+    await page.mouse.move(from.x + from.width / 2, y);
+    await page.mouse.down();
+    // the sign board goes from 3.6 m to the middle of the 9 m beam, which is the middle of the sketch
+    await page.mouse.move(sketch.x + sketch.width / 2 - 20, y, { steps: 5 });
+    await page.mouse.move(sketch.x + sketch.width / 2, y, { steps: 5 });
+    await page.mouse.up();
+    await page.locator('.sp-status', { hasText: 'Written to B6:I17' }).waitFor();
+    expect(await field('Row 8, At').inputValue()).toBe('4.5');
+    expect(await statusOf('C13')).toBe('4.5');
+  });
+
+  test('the drawing is saved as SVG and PNG with everything in it; a record sheet is made', async () => {
+    await start();
+    await openSheet('Canopy beam');
+    await goTo('E20');
+    await title('B6:I17');
+    await page.locator('.sp-figure summary').click();
+    const save = async (words: string): Promise<{ name: string; bytes: Buffer }> => {
+      const [download] = await Promise.all([
+        page.waitForEvent('download'),
+        page.locator('button', { hasText: words }).click(),
+      ]);
+      return { name: download.suggestedFilename(), bytes: readFileSync(await download.path()) };
+    };
+    const vector = await save('Save as SVG');
+    const text = vector.bytes.toString('utf8');
+    expect(vector.name).toBe('beam Canopy beam B6-I17.svg');
+    expect(text.startsWith('<svg')).toBe(true);
+    expect(text).not.toMatch(/var\(|class=/); // nothing left that needs the pane's style sheet
+    expect(text).toContain('aria-label="Beam of length 9 m, 2 supports');
+    const picture = await save('Save as PNG');
+    expect(picture.bytes.subarray(1, 4).toString()).toBe('PNG');
+    expect(picture.bytes.readUInt32BE(16)).toBe(3 * 400); // three pixels for each of the drawing's
+    await page.locator('#sp-tab-place').click();
+    await page.locator('button', { hasText: 'Make a record sheet' }).click();
+    await page.locator('.sp-status', { hasText: 'The record stands on the sheet "Beam record"' }).waitFor();
+    await openSheet('Beam record');
+    expect(await statusOf('A1')).toBe('Beam calculation record');
+  });
+
   test('rows of a new beam are placed at an empty place and shown at once', async () => {
     await start(400, 'light', 'place');
     await openSheet('Canopy beam');
