@@ -170,111 +170,99 @@ export function close(
   const d = [flexibility * length * length, flexibility * length, 1, 1 / length];
 
   let row = 0;
-  const put = (station: number, component: number, value: number, rowComponent: number): void => {
-    if (value !== 0) band.set(row, 4 * station + component, (value * d[component]!) / d[rowComponent]!);
+  let i = 0;
+  let station = stations[0]!;
+  const put = (at: number, component: number, value: number, unit: number): void => {
+    if (value !== 0) band.set(row, 4 * at + component, (value * d[component]!) / d[unit]!);
   };
-  const moved = (s: Station, c: number, which: 0 | 1): number =>
-    s.supportIndex >= 0 && columns.moved ? columns.moved[(s.supportIndex * C + c) * 2 + which]! : 0;
-  const jump = (s: Station, c: number, component: number): number => {
-    if (!columns.jumps) return 0;
-    const j = (s.at * C + c) * 4;
-    return component === 2
-      ? columns.jumps[j + 2]! - axial * columns.jumps[j]!
-      : columns.jumps[j + component]!;
+  /**
+   * One condition: coefficients of the state left of the station (reached through T and p) and right of it, and of what is given there:
+   * displacement and rotation of the ground, then the four jumps.
+   */
+  const condition = (unit: number, onLeft: Row, onRight: Row, given: Row): void => {
+    if (onLeft !== NONE) {
+      for (let j = 0; j < 4; j++) {
+        let sum = 0;
+        for (let m = 0; m < 4; m++) if (onLeft[m] !== 0) sum += onLeft[m]! * T[4 * j + m]!;
+        put(i - 1, j, sum, unit);
+      }
+    }
+    if (onRight !== NONE) for (let j = 0; j < 4; j++) put(i, j, onRight[j]!, unit);
+    for (let c = 0; c < C; c++) {
+      let value = 0;
+      if (columns.moved && station.supportIndex >= 0) {
+        const at = (station.supportIndex * C + c) * 2;
+        value += given[0]! * columns.moved[at]! + given[1]! * columns.moved[at + 1]!;
+      }
+      if (columns.jumps) {
+        const at = (station.at * C + c) * 4;
+        const offset = columns.jumps[at]!;
+        value +=
+          given[2]! * offset +
+          given[3]! * columns.jumps[at + 1]! +
+          given[4]! * (columns.jumps[at + 2]! - axial * offset) +
+          given[5]! * columns.jumps[at + 3]!;
+      }
+      if (onLeft !== NONE) for (let m = 0; m < 4; m++) value -= onLeft[m]! * p[4 * c + m]!;
+      rhs[c * n + row] = value / d[unit]!;
+    }
+    row++;
   };
 
-  for (let i = 0; i < stations.length; i++) {
-    const station = stations[i]!;
+  for (; i < stations.length; i++) {
+    station = stations[i]!;
     const { support, hinge, slide } = station;
     const left = i > 0;
     const right = i < stations.length - 1;
-    const held = support?.held ?? false;
-    const clamped = support?.clamped ?? false;
-    const k = held ? 0 : (support?.spring ?? 0);
-    const kr = clamped ? 0 : (support?.rotationalSpring ?? 0);
+    const held = support !== null && support.held;
+    const clamped = support !== null && support.clamped;
+    const k = support === null || held ? 0 : support.spring;
+    const kr = support === null || clamped ? 0 : support.rotationalSpring;
     if (left) carrySegment(cut.regions, matrices, columns, axial, stations[i - 1]!.at, station.at, T, p);
-    /** One condition: sum over the left state (through T) and the right state of the coefficients = given(column). */
-    const condition = (
-      unit: number,
-      onLeft: readonly number[] | null,
-      onRight: readonly number[] | null,
-      given: ((c: number) => number) | null,
-    ): void => {
-      if (onLeft) {
-        for (let j = 0; j < 4; j++) {
-          let sum = 0;
-          for (let m = 0; m < 4; m++) if (onLeft[m] !== 0) sum += onLeft[m]! * T[4 * j + m]!;
-          put(i - 1, j, sum, unit);
-        }
-      }
-      if (onRight) for (let j = 0; j < 4; j++) put(i, j, onRight[j]!, unit);
-      for (let c = 0; c < C; c++) {
-        let value = given ? given(c) : 0;
-        if (onLeft) for (let m = 0; m < 4; m++) value -= onLeft[m]! * p[4 * c + m]!;
-        rhs[c * n + row] = value / d[unit]!;
-      }
-      row++;
-    };
-
-    /** S jumps by -P and by the spring's push k (v - ground), v taken left of a dislocation */
-    const onSpring = (c: number): number =>
-      jump(station, c, 3) - k * (moved(station, c, 0) + jump(station, c, 0));
+    // S jumps by -P and by the spring's push k (v - ground); M by C and by the rotational spring's turn -kr (rotation - imposed). An
+    // influence line's dislocation at a support stands just right of it, so springs feel the state left of it.
+    const springS = k === 0 ? JUMP_S : [-k, 0, -k, 0, 0, 1];
+    const springM = kr === 0 ? JUMP_M : [0, kr, 0, kr, 1, 0];
 
     if (left && right) {
       if (held) {
-        condition(0, V, null, (c) => moved(station, c, 0));
-        // an influence line's dislocation at a support stands just right of it
-        condition(0, null, V, (c) => moved(station, c, 0) + jump(station, c, 0));
-      } else if (!slide) {
-        condition(0, MINUS_V, V, (c) => jump(station, c, 0));
-      }
+        condition(0, V, NONE, GROUND);
+        condition(0, NONE, V, GROUND_AND_OFFSET);
+      } else if (!slide) condition(0, MINUS_V, V, OFFSET);
       if (hinge) {
-        condition(2, M, null, null);
-        condition(2, null, M, null);
+        condition(2, M, NONE, NOTHING);
+        condition(2, NONE, M, NOTHING);
+      } else if (clamped) {
+        condition(1, R, NONE, TURN);
+        condition(1, NONE, R, TURN_AND_KINK);
       } else {
-        if (clamped) {
-          condition(1, R, null, (c) => moved(station, c, 1));
-          condition(1, null, R, (c) => moved(station, c, 1) + jump(station, c, 1));
-        } else {
-          condition(1, MINUS_R, R, (c) => jump(station, c, 1));
-          // the rotational spring turns the section back: M jumps by -kr (rotation - imposed)
-          condition(
-            2,
-            slide ? [-axial, 0, -1, 0] : MINUS_M,
-            [slide ? axial : 0, kr, 1, 0],
-            (c) => jump(station, c, 2) + kr * (moved(station, c, 1) + jump(station, c, 1)),
-          );
-        }
+        condition(1, MINUS_R, R, KINK);
+        if (slide) condition(2, [-axial, 0, -1, 0], [axial, kr, 1, 0], springM);
+        else condition(2, MINUS_M, kr === 0 ? M : [0, kr, 1, 0], springM);
       }
       if (slide) {
-        condition(3, S, null, null);
-        condition(3, null, S, null);
-      } else if (!held) {
-        condition(3, MINUS_S, [-k, 0, 0, 1], onSpring);
-      }
+        condition(3, S, NONE, NOTHING);
+        condition(3, NONE, S, NOTHING);
+      } else if (!held) condition(3, MINUS_S, k === 0 ? S : [-k, 0, 0, 1], springS);
     } else if (right) {
-      if (held) condition(0, null, V, (c) => moved(station, c, 0) + jump(station, c, 0));
-      else condition(3, null, [-k, 0, 0, 1], onSpring);
-      if (clamped) condition(1, null, R, (c) => moved(station, c, 1) + jump(station, c, 1));
-      else {
-        condition(
-          2,
-          null,
-          [0, kr, 1, 0],
-          (c) => jump(station, c, 2) + kr * (moved(station, c, 1) + jump(station, c, 1)),
-        );
-      }
+      if (held) condition(0, NONE, V, GROUND_AND_OFFSET);
+      else condition(3, NONE, [-k, 0, 0, 1], springS);
+      if (clamped) condition(1, NONE, R, TURN_AND_KINK);
+      else condition(2, NONE, [0, kr, 1, 0], springM);
     } else {
-      if (held) condition(0, V, null, (c) => moved(station, c, 0) - jump(station, c, 0));
-      else condition(3, [k, 0, 0, 1], null, (c) => k * moved(station, c, 0) - jump(station, c, 3));
-      if (clamped) condition(1, R, null, (c) => moved(station, c, 1) - jump(station, c, 1));
-      else condition(2, [0, -kr, 1, 0], null, (c) => -jump(station, c, 2) - kr * moved(station, c, 1));
+      // at the far end a dislocation stands just left of the support
+      if (held) condition(0, V, NONE, GROUND_LESS_OFFSET);
+      else condition(3, [k, 0, 0, 1], NONE, [k, 0, 0, 0, 0, -1]);
+      if (clamped) condition(1, R, NONE, TURN_LESS_KINK);
+      else condition(2, [0, -kr, 1, 0], NONE, [0, -kr, 0, 0, -1, 0]);
     }
   }
 
   if (!(band.factor() > 0)) return null;
   let conditions = 0;
-  for (let c = 0; c < C; c++) conditions = Math.max(conditions, band.solve(rhs, c * n));
+  for (let c = 0; c < C; c++) {
+    if (columns.active[c]) conditions = Math.max(conditions, band.solve(rhs, c * n));
+  }
   const states: number[] = [];
   for (let i = 0; i + 1 < stations.length; i++) {
     for (let c = 0; c < C; c++) for (let j = 0; j < 4; j++) states.push(rhs[c * n + 4 * i + j]! * d[j]!);
@@ -282,14 +270,29 @@ export function close(
   return { stations, states, conditions };
 }
 
-const V = [1, 0, 0, 0];
-const R = [0, 1, 0, 0];
-const M = [0, 0, 1, 0];
-const S = [0, 0, 0, 1];
-const MINUS_V = [-1, 0, 0, 0];
-const MINUS_R = [0, -1, 0, 0];
-const MINUS_M = [0, 0, -1, 0];
-const MINUS_S = [0, 0, 0, -1];
+type Row = readonly number[];
+const NONE: Row = [];
+// coefficients of a state (v, rotation, M, S)
+const V: Row = [1, 0, 0, 0];
+const R: Row = [0, 1, 0, 0];
+const M: Row = [0, 0, 1, 0];
+const S: Row = [0, 0, 0, 1];
+const MINUS_V: Row = [-1, 0, 0, 0];
+const MINUS_R: Row = [0, -1, 0, 0];
+const MINUS_M: Row = [0, 0, -1, 0];
+const MINUS_S: Row = [0, 0, 0, -1];
+// coefficients of what is given (ground displacement and rotation; jumps of v, rotation, M, S)
+const NOTHING: Row = [0, 0, 0, 0, 0, 0];
+const GROUND: Row = [1, 0, 0, 0, 0, 0];
+const GROUND_AND_OFFSET: Row = [1, 0, 1, 0, 0, 0];
+const GROUND_LESS_OFFSET: Row = [1, 0, -1, 0, 0, 0];
+const TURN: Row = [0, 1, 0, 0, 0, 0];
+const TURN_AND_KINK: Row = [0, 1, 0, 1, 0, 0];
+const TURN_LESS_KINK: Row = [0, 1, 0, -1, 0, 0];
+const OFFSET: Row = [0, 0, 1, 0, 0, 0];
+const KINK: Row = [0, 0, 0, 1, 0, 0];
+const JUMP_M: Row = [0, 0, 0, 0, 1, 0];
+const JUMP_S: Row = [0, 0, 0, 0, 0, 1];
 
 /** Mean of 1/EI over the beam; only a scale. */
 function meanFlexibility(cut: Cut): number {

@@ -25,14 +25,20 @@ export class Columns {
   /** displacement and rotation of supports, per support and column */
   readonly moved: number[] | null = null;
 
+  /** columns in which anything acts; the others are zero everywhere */
+  readonly active: readonly boolean[];
+
   constructor(model: BeamModel, cut: Cut, count: number, sorting: Sorting) {
     this.count = count;
+    const active = new Array<boolean>(count).fill(false);
+    this.active = active;
     const regions = cut.regions.length;
     let q: number[] | null = null;
     for (const load of model.loads) {
       const sorted = sorting(load);
       if (!sorted) continue;
       const { column, factor } = sorted;
+      active[column] = true;
       switch (load.kind) {
         case 'point':
         case 'couple':

@@ -16,7 +16,20 @@ interface Event {
   kind: 'deflection' | 'rotation' | 'hinge' | 'slide' | 'soil-left' | 'soil-right';
 }
 
+/** One rigid piece: held by two deflections, by a deflection and a rotation, or by soil. */
+function isHeld(model: BeamModel): boolean {
+  let deflections = 0;
+  let rotations = 0;
+  for (const s of model.supports) {
+    if (s.held || s.spring !== 0) deflections++;
+    if (s.clamped || s.rotationalSpring !== 0) rotations++;
+  }
+  if (deflections >= 2 || (deflections === 1 && rotations >= 1)) return true;
+  return model.foundations.some((f) => f.stiffness !== 0);
+}
+
 export function findMechanism(model: BeamModel): Issue | null {
+  if (model.releases.length === 0 && isHeld(model)) return null;
   const events: Event[] = [];
   for (const s of model.supports) {
     if (s.held || s.spring !== 0) events.push({ at: s.at, kind: 'deflection' });

@@ -77,17 +77,37 @@ export function cutBeam(
 }
 
 function primaryBreaks(model: BeamModel): number[] {
-  const set = new Set<number>([model.start, model.end]);
-  for (const s of model.supports) set.add(s.at);
-  for (const r of model.releases) set.add(r.at);
-  for (const s of model.ei) set.add(s.from).add(s.to);
-  for (const s of model.ga) set.add(s.from).add(s.to);
-  for (const s of model.foundations) set.add(s.from).add(s.to);
+  const all: number[] = [model.start, model.end];
+  for (const s of model.supports) all.push(s.at);
+  for (const r of model.releases) all.push(r.at);
+  for (const s of model.ei) all.push(s.from, s.to);
+  for (const s of model.ga) all.push(s.from, s.to);
+  for (const s of model.foundations) all.push(s.from, s.to);
   for (const l of model.loads) {
-    if ('at' in l) set.add(l.at);
-    else if ('from' in l) set.add(l.from).add(l.to);
+    if (l.kind === 'axial') continue;
+    if ('at' in l) all.push(l.at);
+    else all.push(l.from, l.to);
   }
-  return [...set].sort((a, b) => a - b);
+  return distinct(all.length > 40 ? Array.from(Float64Array.from(all).sort()) : insertionSort(all));
+}
+
+/** Short lists: quicker than the general sort, and without its temporary copies. */
+function insertionSort(list: number[]): number[] {
+  for (let i = 1; i < list.length; i++) {
+    const x = list[i]!;
+    let j = i - 1;
+    for (; j >= 0 && list[j]! > x; j--) list[j + 1] = list[j]!;
+    list[j + 1] = x;
+  }
+  return list;
+}
+
+/** Keeps the first of equal neighbours, in place. */
+function distinct(list: number[]): number[] {
+  let kept = 1;
+  for (let i = 1; i < list.length; i++) if (list[i] !== list[kept - 1]) list[kept++] = list[i]!;
+  list.length = kept;
+  return list;
 }
 
 function constantOf(stretch: SectionStretch): number | null {

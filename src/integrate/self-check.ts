@@ -43,6 +43,7 @@ export function selfCheck(system: System): Residuals {
   let conditions = system.closed.conditions;
   const reach = segmentsByStart(system);
   for (let c = 0; c < system.columns.count; c++) {
+    if (!system.columns.active[c]) continue;
     const found = checkColumn(system, c, reach);
     equilibrium = Math.max(equilibrium, found.equilibrium);
     energy = Math.max(energy, found.energy);
