@@ -13,7 +13,11 @@ require.extensions['.ts'] = (module, file) => {
     filename: file,
     swcrc: false,
     sourceMaps: 'inline',
-    jsc: { parser: { syntax: 'typescript' }, target: 'es2020' },
+    jsc: {
+      parser: { syntax: 'typescript' },
+      target: 'es2020',
+      assumptions: { setPublicClassFields: true },
+    },
     module: { type: 'commonjs' },
   });
   module._compile(code, file);

@@ -12,7 +12,7 @@ export interface Timing {
 let sink = 0;
 
 export function measure(f: () => number, minimumMilliseconds = 40, repeats = 9): Timing {
-  // warm up and find a batch that takes long enough to be read off the clock
+  // find a batch that takes long enough to be read off the clock
   let batch = 1;
   for (;;) {
     const spent = run(f, batch);
@@ -21,6 +21,15 @@ export function measure(f: () => number, minimumMilliseconds = 40, repeats = 9):
       batch + 1,
       Math.ceil(batch * Math.min(10, (minimumMilliseconds * 1200) / Math.max(spent, 50))),
     );
+  }
+  // warm up until the compiler has finished with it: three batches in a row that are no longer faster than the best before
+  let best = Infinity;
+  for (let calm = 0, i = 0; calm < 3 && i < 100; i++) {
+    const each = run(f, batch) / batch;
+    calm = each > 0.97 * best ? calm + 1 : 0;
+    best = Math.min(best, each);
+    const fitting = Math.ceil((minimumMilliseconds * 1000) / each);
+    if (fitting > 2 * batch) batch = fitting;
   }
   const times: number[] = [];
   for (let i = 0; i < repeats; i++) times.push(run(f, batch) / batch);

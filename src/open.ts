@@ -48,10 +48,15 @@ export interface Review {
   readonly cautions: readonly Issue[];
 }
 
-/** Bounds of the memo: tables seen, and members (a table with its names and values) kept solved. */
+/**
+ * Bounds of the memo: tables seen, and members (a table with its names and values) kept solved.
+ * Few members on purpose. Solving one again costs some 15 times a look-up, but keeping thousands costs more than that on every new one:
+ * what lives long is copied by the garbage collector again and again (measured: a schedule of 10,000 members took 4 times as long with
+ * 256 kept as with 64). 64 is enough for the several columns of a schedule that ask about one row, and for the beams of a sheet.
+ */
 export const MEMO_BOUNDS = {
   tables: { entries: 1000, bytes: 32e6 },
-  members: { entries: 4000, bytes: 64e6 },
+  members: { entries: 64, bytes: 64e6 },
   /** combinations kept per member */
   combinations: 256,
 } as const;
