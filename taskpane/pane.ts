@@ -103,7 +103,7 @@ class Pane {
       add: (limit, note) => {
         this.picker.reset();
         this.wishFor({ limit: null });
-        this.rows.append({ Item: 'limit', Value: limit, Note: note });
+        void this.rows.append({ Item: 'limit', Value: limit, Note: note });
       },
     });
     this.drawing.overlay = (drawing, { model }) =>
@@ -283,7 +283,8 @@ class Pane {
       tab === 'rows',
     );
     this.showPlace();
-    if (beam) this.rows.show(reviewed, this.separators);
+    if (beam && tab === 'rows') void this.rows.show(reviewed, this.separators);
+    else if (beam) this.rows.later(reviewed, this.separators);
     this.answers.show(tab === 'beam' ? reviewed : null, this.separators);
     if (tab === 'working') this.working.show(reviewed, this.separators);
     const parts: (HTMLElement | null)[] = [];

@@ -56,7 +56,7 @@ export const texts = {
     holdHint: 'Keep this beam while other cells are selected',
     which: 'Which of the beams in this formula',
     combination: (text: string) => `Combination ${text}`,
-    everything: 'Every load acts',
+    everything: 'every load acts',
     read: 'Cells read',
   },
 

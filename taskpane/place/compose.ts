@@ -83,7 +83,8 @@ export function composeFormula(subject: Subject, wanted: Wanted, target: Area): 
     }
   });
   while (args[args.length - 1] === '') args.pop();
-  return `=SPANROW.${wanted.fn}(${args.join(', ')})`;
+  // an argument left out leaves no blank behind: "(beam,, names, values)"
+  return `=SPANROW.${wanted.fn}(${args.join(', ').replace(/, (?=,)/g, ',')})`;
 }
 
 /** Short name of a cell for a sentence. */

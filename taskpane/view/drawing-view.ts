@@ -25,6 +25,7 @@ export class DrawingView {
   private drawn: Drawing | null = null;
   private wishes: readonly HTMLInputElement[] = [];
   private width = 0;
+  private known = 0;
   private measured = false;
   private readonly observer: ResizeObserver | null;
 
@@ -41,7 +42,8 @@ export class DrawingView {
       typeof ResizeObserver === 'undefined'
         ? null
         : new ResizeObserver(() => {
-            if (Math.abs(this.measure() - this.width) >= 1) this.render();
+            this.known = this.stage.clientWidth;
+            if (this.known > 0 && Math.abs(this.measure() - this.width) >= 1) this.render();
           });
     this.observer?.observe(this.stage);
   }
@@ -88,7 +90,8 @@ export class DrawingView {
   }
 
   private measure(): number {
-    const width = this.stage.clientWidth || 350;
+    // asking the browser makes it lay out at once: the observer's last word is as good
+    const width = this.known || this.stage.clientWidth || 350;
     return Math.min(Math.max(width, WIDTH_LEAST), WIDTH_MOST);
   }
 

@@ -93,6 +93,7 @@ export class HeadView {
     else words.push(texts.head.found);
     const combination = reviewed.open?.combination?.text;
     if (combination) words.push(combination);
+    else if ((reviewed.model?.cases.length ?? 0) > 1) words.push(texts.head.everything);
     if (held) words.push(texts.head.held);
     else if (kept) words.push(texts.head.kept);
     put(this.sub, words.join(' · '));

@@ -48,6 +48,7 @@ export class RowsView {
   private form: Form = 'fixed';
   private columns: readonly (ColumnName | null)[] = [];
   private reading = 0;
+  private waiting: { reviewed: Reviewed; separators: Separators } | null = null;
   private queue: Promise<void> = Promise.resolve();
 
   constructor(
@@ -65,7 +66,14 @@ export class RowsView {
     this.element = h('div', { class: 'sp-rows-view' }, this.editor.element, this.note);
   }
 
-  show(reviewed: Reviewed, separators: Separators): void {
+  /** Rows are out of sight: they are built when they are next needed, not now. */
+  later(reviewed: Reviewed, separators: Separators): void {
+    this.reading++;
+    this.waiting = { reviewed, separators };
+  }
+
+  async show(reviewed: Reviewed, separators: Separators): Promise<void> {
+    this.waiting = null;
     const { subject, review } = reviewed;
     const reading = ++this.reading;
     const single = subject.cells.length === 1 && subject.cells[0]?.length === 1;
@@ -110,7 +118,7 @@ export class RowsView {
       this.explain(texts.rows.readOnlyJoined);
       return;
     }
-    void this.port.read([source]).then(
+    await this.port.read([source]).then(
       ([block]) => {
         if (reading !== this.reading) return;
         this.form = 'cells';
@@ -146,7 +154,8 @@ export class RowsView {
   }
 
   /** Adds a row at the end, by column name; false when the rows cannot be edited here. */
-  append(values: Partial<Record<ColumnName, unknown>>): boolean {
+  async append(values: Partial<Record<ColumnName, unknown>>): Promise<boolean> {
+    if (this.waiting) await this.show(this.waiting.reviewed, this.waiting.separators);
     const { draft } = this.editor;
     if (!draft || this.form === 'fixed') return false;
     const row = this.columns.map((name) => ({
