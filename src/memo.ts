@@ -4,8 +4,7 @@
  * A host hands every call fresh arrays, so identity says nothing: the key is the content. A look-up hashes the cells
  * (numbers by their 64 bits, strings by their char codes), then verifies the hit cell by cell, so a collision costs
  * time and never an answer. Both passes read each cell once and allocate nothing.
- * Bounded by entries and by bytes; when either is exceeded, the quarter used longest ago goes.
- * A hit only stamps the entry, so ageing costs nothing on the warm path.
+ * Bounded by entries and by bytes; what was used longest ago goes first (see ContentMemo).
  */
 
 const numberView = new Float64Array(1);
@@ -108,18 +107,41 @@ function cellBytes(cell: unknown): number {
 }
 
 interface Entry<V> {
-  readonly hash: number;
   readonly keys: readonly unknown[];
   readonly value: V;
-  bytes: number;
-  used: number;
+  readonly bytes: number;
 }
 
+/** Entries made or used in one stretch of time. */
+class Generation<V> {
+  readonly buckets = new Map<number, Entry<V>[]>();
+  entries = 0;
+  bytes = 0;
+
+  add(hash: number, entry: Entry<V>): void {
+    const bucket = this.buckets.get(hash);
+    if (bucket === undefined) this.buckets.set(hash, [entry]);
+    else bucket.push(entry);
+    this.entries++;
+    this.bytes += entry.bytes;
+  }
+
+  remove(hash: number, entry: Entry<V>): void {
+    const bucket = this.buckets.get(hash)!;
+    bucket.splice(bucket.indexOf(entry), 1);
+    this.entries--;
+    this.bytes -= entry.bytes;
+  }
+}
+
+/**
+ * Two generations, each bounded by half of the bounds. What is made or used goes into the young one; when that is full it becomes the
+ * old one, and what stood in the old one, unused since, is dropped as a whole: no sorting, and no deleting one by one, which would
+ * leave the garbage collector chains of half-dead tables to follow.
+ */
 export class ContentMemo<V> {
-  private readonly buckets = new Map<number, Entry<V>[]>();
-  private entries = 0;
-  private bytes = 0;
-  private clock = 0;
+  private young = new Generation<V>();
+  private old = new Generation<V>();
 
   /** `maxEntries` and `maxBytes`: the bounds; keys are one or more ranges or scalars. */
   constructor(
@@ -129,12 +151,11 @@ export class ContentMemo<V> {
 
   /** The value kept for one key, or undefined. */
   find(hash: number, key: unknown): V | undefined {
-    const bucket = this.buckets.get(hash);
-    if (bucket === undefined) return undefined;
-    for (const entry of bucket) {
-      if (sameRange(entry.keys[0], key)) {
-        entry.used = ++this.clock;
-        return entry.value;
+    for (let age = 0; age < 2; age++) {
+      const bucket = (age === 0 ? this.young : this.old).buckets.get(hash);
+      if (bucket === undefined) continue;
+      for (const entry of bucket) {
+        if (sameRange(entry.keys[0], key)) return age === 0 ? entry.value : this.renew(hash, entry);
       }
     }
     return undefined;
@@ -142,12 +163,13 @@ export class ContentMemo<V> {
 
   /** The value kept for a key of three parts (kept apart from `find`: no array is made on the warm path). */
   find3(hash: number, a: unknown, b: unknown, c: unknown): V | undefined {
-    const bucket = this.buckets.get(hash);
-    if (bucket === undefined) return undefined;
-    for (const entry of bucket) {
-      if (entry.keys[0] === a && sameRange(entry.keys[1], b) && sameRange(entry.keys[2], c)) {
-        entry.used = ++this.clock;
-        return entry.value;
+    for (let age = 0; age < 2; age++) {
+      const bucket = (age === 0 ? this.young : this.old).buckets.get(hash);
+      if (bucket === undefined) continue;
+      for (const entry of bucket) {
+        if (entry.keys[0] === a && sameRange(entry.keys[1], b) && sameRange(entry.keys[2], c)) {
+          return age === 0 ? entry.value : this.renew(hash, entry);
+        }
       }
     }
     return undefined;
@@ -155,45 +177,36 @@ export class ContentMemo<V> {
 
   /** Keeps a value; `bytes` is the caller's estimate of key and value together. Keys must already be copies. */
   keep(hash: number, keys: readonly unknown[], value: V, bytes: number): V {
-    const entry: Entry<V> = { hash, keys, value, bytes, used: ++this.clock };
-    const bucket = this.buckets.get(hash);
-    if (bucket === undefined) this.buckets.set(hash, [entry]);
-    else bucket.push(entry);
-    this.entries++;
-    this.bytes += bytes;
-    if (this.entries > this.maxEntries || this.bytes > this.maxBytes) this.evict(entry);
+    this.put(hash, { keys, value, bytes });
     return value;
   }
 
   /** Entries and estimated bytes held now. */
   size(): { entries: number; bytes: number } {
-    return { entries: this.entries, bytes: this.bytes };
+    return { entries: this.young.entries + this.old.entries, bytes: this.young.bytes + this.old.bytes };
   }
 
   clear(): void {
-    this.buckets.clear();
-    this.entries = 0;
-    this.bytes = 0;
+    this.young = new Generation();
+    this.old = new Generation();
   }
 
-  /** Drops the longest unused until both bounds hold with a quarter to spare; the entry just made always stays. */
-  private evict(newest: Entry<V>): void {
-    const all: Entry<V>[] = [];
-    for (const bucket of this.buckets.values()) all.push(...bucket);
-    all.sort((a, b) => a.used - b.used);
-    for (const entry of all) {
-      if (this.entries <= 0.75 * this.maxEntries && this.bytes <= 0.75 * this.maxBytes) return;
-      if (entry !== newest) this.drop(entry);
+  private renew(hash: number, entry: Entry<V>): V {
+    this.old.remove(hash, entry);
+    this.put(hash, entry);
+    return entry.value;
+  }
+
+  private put(hash: number, entry: Entry<V>): void {
+    const { young } = this;
+    const full =
+      young.entries >= Math.max(1, this.maxEntries >> 1) || young.bytes + entry.bytes > 0.5 * this.maxBytes;
+    if (full && young.entries > 0) {
+      this.old = young;
+      this.young = new Generation();
     }
-  }
-
-  private drop(entry: Entry<V>): void {
-    const bucket = this.buckets.get(entry.hash);
-    if (bucket === undefined) return;
-    const rest = bucket.filter((other) => other !== entry);
-    if (rest.length === 0) this.buckets.delete(entry.hash);
-    else this.buckets.set(entry.hash, rest);
-    this.entries--;
-    this.bytes -= entry.bytes;
+    this.young.add(hash, entry);
+    // one entry larger than half the bound leaves no room for the old ones; it is kept itself until the next
+    if (this.size().bytes > this.maxBytes) this.old = new Generation();
   }
 }
