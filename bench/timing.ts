@@ -11,6 +11,8 @@ export interface Timing {
 
 let sink = 0;
 
+const WARM_MILLISECONDS = 1500;
+
 export function measure(f: () => number, minimumMilliseconds = 40, repeats = 9): Timing {
   // find a batch that takes long enough to be read off the clock
   let batch = 1;
@@ -22,15 +24,11 @@ export function measure(f: () => number, minimumMilliseconds = 40, repeats = 9):
       Math.ceil(batch * Math.min(10, (minimumMilliseconds * 1200) / Math.max(spent, 50))),
     );
   }
-  // warm up until the compiler has finished with it: three batches in a row that are no longer faster than the best before
-  let best = Infinity;
-  for (let calm = 0, i = 0; calm < 3 && i < 100; i++) {
-    const each = run(f, batch) / batch;
-    calm = each > 0.97 * best ? calm + 1 : 0;
-    best = Math.min(best, each);
-    const fitting = Math.ceil((minimumMilliseconds * 1000) / each);
-    if (fitting > 2 * batch) batch = fitting;
-  }
+  // warm up: the compiler works beside the program and is late on a busy machine, so for a fixed while, not a number of calls
+  const until = process.hrtime.bigint() + BigInt(WARM_MILLISECONDS) * 1_000_000n;
+  let each = run(f, batch) / batch;
+  while (process.hrtime.bigint() < until) each = run(f, batch) / batch;
+  batch = Math.max(batch, Math.ceil((minimumMilliseconds * 1000) / Math.max(each, 0.001)));
   const times: number[] = [];
   for (let i = 0; i < repeats; i++) times.push(run(f, batch) / batch);
   times.sort((a, b) => a - b);

@@ -55,7 +55,7 @@ export interface Review {
  * 256 kept as with 64). 64 is enough for the several columns of a schedule that ask about one row, and for the beams of a sheet.
  */
 export const MEMO_BOUNDS = {
-  tables: { entries: 1000, bytes: 32e6 },
+  tables: { entries: 256, bytes: 32e6 },
   members: { entries: 64, bytes: 64e6 },
   /** combinations kept per member */
   combinations: 256,
