@@ -115,6 +115,7 @@ class Pane {
     this.rows = new RowsView(port, ask, {
       preview: (draft) => this.preview(draft),
       changed: () => this.drawing.refreshOverlay(),
+      stale: () => this.changed(null),
       written: (words) => {
         this.announce(words);
         this.changed(null);

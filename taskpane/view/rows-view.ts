@@ -33,6 +33,8 @@ export interface RowsEvents {
   preview(draft: Draft): void;
   /** the editor shows other rows now */
   changed(): void;
+  /** something was read too early to be shown: read again */
+  stale(): void;
   written(words: string): void;
   failed(reason: unknown): void;
 }
@@ -48,6 +50,9 @@ export class RowsView {
   private form: Form = 'fixed';
   private columns: readonly (ColumnName | null)[] = [];
   private reading = 0;
+  /** steps on their way to the sheet: what is read meanwhile is older than what the editor shows */
+  private pending = 0;
+  private late = false;
   private waiting: { reviewed: Reviewed; separators: Separators } | null = null;
   private queue: Promise<void> = Promise.resolve();
 
@@ -61,7 +66,6 @@ export class RowsView {
         if (this.form === 'cells') this.events.preview(draft);
       },
       commit: (before, after) => this.commit(before, after),
-      row: () => undefined,
     });
     this.element = h('div', { class: 'sp-rows-view' }, this.editor.element, this.note);
   }
@@ -121,6 +125,10 @@ export class RowsView {
     await this.port.read([source]).then(
       ([block]) => {
         if (reading !== this.reading) return;
+        if (this.pending > 0) {
+          this.late = true;
+          return;
+        }
         this.form = 'cells';
         this.source = source;
         const formulas = subject.cells.map((row, i) =>
@@ -206,11 +214,17 @@ export class RowsView {
 
   /** Steps reach the sheet one after the other, in the order they were made. */
   private commit(before: Draft, after: Draft): void {
+    this.pending++;
     this.queue = this.queue
       .then(() => this.write(before, after))
       .catch((reason: unknown) => {
         this.editor.takeBack();
         this.events.failed(reason);
+      })
+      .then(() => {
+        this.pending--;
+        if (this.pending === 0 && this.late) this.events.stale();
+        if (this.pending === 0) this.late = false;
       });
   }
 

@@ -187,6 +187,37 @@ describe('rows', () => {
     expect(port.valueAt('E10')).toBe(20);
   });
 
+  test('quick typing over several cells: nothing typed is lost while earlier cells are still being written', async () => {
+    const write = port.write.bind(port);
+    port.write = async (...args) => {
+      await settle(80); // a slow host
+      return write(...args);
+    };
+    type('Row 7, Value', '20');
+    type('Row 7, At', '1');
+    await settle(100); // the first is written and read again, the second still on its way
+    type('Row 7, To', '5', false);
+    await settle(250);
+    expect([port.valueAt('E10'), port.valueAt('C10')]).toEqual([20, 1]);
+    expect(document.activeElement).toBe(field('Row 7, To'));
+    expect(field('Row 7, To').value).toBe('5');
+    field('Row 7, To').blur();
+    await settle(200);
+    expect(port.valueAt('D10')).toBe(5);
+    button('Undo').click();
+    await settle(200);
+    expect([port.valueAt('D10'), port.valueAt('C10')]).toEqual([6, 1]);
+  });
+
+  test('an item that needs another column gets it, and the focus goes where it was going', async () => {
+    field('Row 7, Item').focus();
+    type('Row 7, Item', 'varying', false);
+    field('Row 7, At').focus();
+    await settle();
+    expect(document.activeElement?.getAttribute('aria-label')).toBe('Row 7, At');
+    expect(field('Row 7, End value')).toBeTruthy();
+  });
+
   test('completion of item words by keys', async () => {
     type('Row 4, Item', 'ro', false);
     const options = Array.from(root.querySelectorAll('[role=option]'), (option) => option.textContent);
