@@ -9,8 +9,8 @@
 
 /** Workspace kept between systems: they are solved one after the other, and making large arrays costs more than the elimination. */
 let workspace = new Float64Array(0);
-/** A beam of some thousand spans; larger workspaces are let go. */
-const KEEP = 1 << 20;
+/** A beam of ten thousand spans (16 MB); larger workspaces are let go. */
+const KEEP = 1 << 21;
 
 function take(size: number): Float64Array {
   if (workspace.length >= size) {
@@ -28,13 +28,14 @@ let last: BandMatrix | null = null;
 /** One system at a time: asking for a second BandMatrix ends the life of the first. */
 export class BandMatrix {
   /** A matrix of zeros; the members of a schedule have one shape, so the last one is used again when it fits. */
-  static zeros(n: number, kl: number, ku: number): BandMatrix {
-    if (last && last.n === n && last.kl === kl && last.ku === ku) {
+  static zeros(n: number, kl: number, ku: number, columns = 1): BandMatrix {
+    if (last && last.n === n && last.kl === kl && last.ku === ku && last.b.length === n * columns) {
       last.a.fill(0);
+      last.b.fill(0);
       return last;
     }
-    const made = new BandMatrix(n, kl, ku);
-    last = made.a.length * 3 <= KEEP ? made : null;
+    const made = new BandMatrix(n, kl, ku, columns);
+    last = made.kept ? made : null;
     return made;
   }
 
@@ -51,14 +52,19 @@ export class BandMatrix {
   private readonly rhs: Float64Array;
   private readonly residual: Float64Array;
   private readonly x: Float64Array;
+  private readonly kept: boolean;
+  /** right-hand sides, one after the other, in unscaled rows; `solve` puts the solution in their place */
+  readonly b: Float64Array;
 
-  private constructor(n: number, kl: number, ku: number) {
+  private constructor(n: number, kl: number, ku: number, columns: number) {
     this.n = n;
     this.kl = kl;
     this.ku = ku;
     this.width = kl + ku + 1 + kl;
     const size = n * this.width;
-    const all = take(2 * size + n * (kl + 5));
+    const total = 2 * size + n * (kl + 5 + columns);
+    this.kept = total <= KEEP;
+    const all = take(total);
     let at = 0;
     const part = (length: number): Float64Array => all.subarray(at, (at += length));
     this.a = part(size);
@@ -69,6 +75,7 @@ export class BandMatrix {
     this.rhs = part(n);
     this.residual = part(n);
     this.x = part(n);
+    this.b = part(n * columns);
   }
 
   set(row: number, column: number, value: number): void {
@@ -128,11 +135,12 @@ export class BandMatrix {
   }
 
   /**
-   * Solves for one right-hand side b[at..at+n-1], given in unscaled rows, with one step of refinement; the solution takes its place.
+   * Solves for right-hand side `column`, with one step of refinement; the solution takes its place in `b`.
    * Returns the largest residual relative to the largest row of terms.
    */
-  solve(b: number[], at: number): number {
-    const { n, kl, ku, width, rowScale, original, rhs, residual, x } = this;
+  solve(column: number): number {
+    const { n, kl, ku, width, rowScale, original, rhs, residual, x, b } = this;
+    const at = column * n;
     for (let r = 0; r < n; r++) x[r] = rhs[r] = b[at + r]! * rowScale[r]!;
     this.substitute(x);
     let worst = 0;

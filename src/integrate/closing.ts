@@ -159,8 +159,8 @@ export function close(
 ): Closed | null {
   const n = 4 * (stations.length - 1);
   const C = columns.count;
-  const band = BandMatrix.zeros(n, 5, 5);
-  const rhs = new Array<number>(n * C).fill(0);
+  const band = BandMatrix.zeros(n, 5, 5, C);
+  const rhs = band.b;
   const T = new Array<number>(16).fill(0);
   const p = new Array<number>(4 * C).fill(0);
 
@@ -261,11 +261,12 @@ export function close(
   if (!(band.factor() > 0)) return null;
   let conditions = 0;
   for (let c = 0; c < C; c++) {
-    if (columns.active[c]) conditions = Math.max(conditions, band.solve(rhs, c * n));
+    if (columns.active[c]) conditions = Math.max(conditions, band.solve(c));
   }
-  const states: number[] = [];
-  for (let i = 0; i + 1 < stations.length; i++) {
-    for (let c = 0; c < C; c++) for (let j = 0; j < 4; j++) states.push(rhs[c * n + 4 * i + j]! * d[j]!);
+  const states = new Array<number>(n * C);
+  let at = 0;
+  for (let s = 0; s < n; s += 4) {
+    for (let c = 0; c < C; c++) for (let j = 0; j < 4; j++) states[at++] = rhs[c * n + s + j]! * d[j]!;
   }
   return { stations, states, conditions };
 }
