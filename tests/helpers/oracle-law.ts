@@ -19,6 +19,8 @@ export function lawSeries(
   a: number,
   b: number,
   force: boolean,
+  /** a load: known to rounding of its largest value over the stretch only; where it passes through zero it has no digits of its own */
+  load = false,
 ): Series | null {
   const { law } = stretch;
   const x0 = Big.of(a);
@@ -31,9 +33,13 @@ export function lawSeries(
       .over(Big.of(stretch.to).minus(Big.of(stretch.from)));
     return [start.plus(rise.times(x0.minus(Big.of(stretch.from)))), rise.times(h)];
   }
+  let whole = 0;
+  for (let i = 0; load && i <= 16; i++) {
+    whole = Math.max(whole, Math.abs(law.at(stretch.from + ((stretch.to - stretch.from) * i) / 16)));
+  }
   for (const points of POINTS) {
     const last = force && points === POINTS[POINTS.length - 1];
-    const series = interpolate(law.at, a, b, points, last);
+    const series = interpolate(law.at, a, b, points, last, whole);
     if (series) return series;
   }
   return null;
@@ -45,12 +51,13 @@ function interpolate(
   b: number,
   points: number,
   force: boolean,
+  whole: number,
 ): Series | null {
   const x0 = Big.of(a);
   const h = Big.of(b).minus(x0);
   const t: Big[] = [];
   const c: Big[] = [];
-  let largest = 0;
+  let largest = whole;
   for (let i = 0; i < points; i++) {
     const x = a + (b - a) * (0.5 - 0.5 * Math.cos((Math.PI * (i + 0.5)) / points));
     const y = at(x);

@@ -9,7 +9,8 @@
  * Reading of the contract where it leaves room, so that a difference shows:
  * - camber: the initial shape is w = -4 r t (1 - t) over from..to; supports act on the movement v from that shape; the shown deflection
  *   is v + w. The shown slope is the rotation theta of the section plus w'.
- * - with axial force S is the vertical force on a section; V = dM/dx; a joint, a spring and a shear release deal with S.
+ * - with axial force S is the vertical force on a section; V = dM/dx; joints and springs deal with S; a shear release slides along its
+ *   own faces and passes the axial force on (see the assembly).
  * - a function law is known only to double precision: it is replaced by interpolation at up to 17 points in short elements.
  */
 import type { BeamModel, Law } from '../../src/beam/model';
@@ -128,7 +129,7 @@ function build(model: BeamModel, factors: readonly number[] | null, breaks: numb
         const factor = factorOf(l.case);
         if (factor.isZero) continue;
         if (l.kind === 'distributed') {
-          const shape = lawSeries(l, a, b, last);
+          const shape = lawSeries(l, a, b, last, true);
           if (!shape) return halve();
           addTo(q, shape, factor);
         } else if (l.kind === 'curvature') kappa = kappa.plus(factor.times(Big.of(l.curvature)));
@@ -200,6 +201,19 @@ function build(model: BeamModel, factors: readonly number[] | null, breaks: numb
   for (const j of joints) {
     right[j.vL] = right[j.vL]!.plus(j.force);
     right[j.tL] = right[j.tL]!.plus(j.couple);
+  }
+  // A sliding joint carries the axial force across its opening: M jumps by -N (vR - vL) (moments about the joint). Its faces slide along
+  // themselves, so what it cannot carry is S - N (theta + w'): only so are the equations symmetric, as those of a conservative system are.
+  for (const j of joints) {
+    if (j.vL === j.vR) continue;
+    into(j.tL, j.vR, axial);
+    into(j.vR, j.tL, axial);
+    into(j.tL, j.vL, axial.negated());
+    into(j.vL, j.tL, axial.negated());
+    const i = joints.indexOf(j);
+    const bow = axial.times(elements[i]!.data.camberSlope[0] ?? Big.zero);
+    right[j.vR] = right[j.vR]!.minus(bow);
+    right[j.vL] = right[j.vL]!.plus(bow);
   }
   const held = new Map<number, Big>();
   for (const s of model.supports) {
