@@ -43,7 +43,11 @@ export function difference(computed: number, ask: PublishedAsk): number {
 /** The formula as it would stand in a cell, with `beam` for the range of rows. */
 export function formulaText(ask: PublishedAsk): string {
   const args = ask.args.map((a) =>
-    typeof a === 'string' ? `"${a}"` : typeof a === 'number' ? String(a) : `{${a.map((row) => row.join(',')).join(';')}}`,
+    typeof a === 'string'
+      ? `"${a}"`
+      : typeof a === 'number'
+        ? String(a)
+        : `{${a.map((row) => row.join(',')).join(';')}}`,
   );
   return `=SPANROW.${ask.function}(${['beam', ...args].join(', ')})`;
 }
@@ -62,7 +66,13 @@ export function verifyAll(): Verified[] {
     const open = openBeam({ beam: rowsOf(one) });
     for (const ask of one.asks) {
       const computed = answer(open, ask);
-      out.push({ case: one, ask, published: Number(ask.value), computed, difference: difference(computed, ask) });
+      out.push({
+        case: one,
+        ask,
+        published: Number(ask.value),
+        computed,
+        difference: difference(computed, ask),
+      });
     }
   }
   return out;
