@@ -256,7 +256,7 @@ const SENTENCES: Readonly<Record<string, Sentence>> = {
     return `The beam is not held: from x = ${detail(i, 'from')} to ${detail(i, 'to')} it is ${motion}. Add a support or remove a release.`;
   },
   'past-critical-load': (i) =>
-    `The compression ${detail(i, 'applied')} is at or past the critical load ${detail(i, 'critical')}: the beam buckles. Expected a smaller axial force.`,
+    `The ${i.detail?.sense === 'tension' ? 'tension' : 'compression'} ${detail(i, 'applied')} is at or past the critical load ${detail(i, 'critical')}: the beam buckles. Expected a smaller axial force.`,
   'self-check-failed': (i) =>
     `The solution did not pass its own check (${detail(i, 'which')}, residual ${detail(i, 'residual')}), so no number is given. Look for stiffnesses or lengths of very different size.`,
   'too-stiff': (i) =>

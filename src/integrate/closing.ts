@@ -177,9 +177,9 @@ export function close(
   };
   /**
    * One condition: coefficients of the state left of the station (reached through T and p) and right of it, and of what is given there:
-   * displacement and rotation of the ground, then the four jumps.
+   * displacement and rotation of the ground, then the four jumps; `shape` multiplies the slope of the initial shape.
    */
-  const condition = (unit: number, onLeft: Row, onRight: Row, given: Row): void => {
+  const condition = (unit: number, onLeft: Row, onRight: Row, given: Row, shape = 0): void => {
     if (onLeft !== NONE) {
       for (let j = 0; j < 4; j++) {
         let sum = 0;
@@ -203,6 +203,7 @@ export function close(
           given[4]! * (columns.jumps[at + 2]! - axial * offset) +
           given[5]! * columns.jumps[at + 3]!;
       }
+      if (shape !== 0) value += shape * columns.shapeSlope(station.at, c);
       if (onLeft !== NONE) for (let m = 0; m < 4; m++) value -= onLeft[m]! * p[4 * c + m]!;
       rhs[c * n + row] = value / d[unit]!;
     }
@@ -241,8 +242,11 @@ export function close(
         else condition(2, MINUS_M, kr === 0 ? M : [0, kr, 1, 0], springM);
       }
       if (slide) {
-        condition(3, S, NONE, NOTHING);
-        condition(3, NONE, S, NOTHING);
+        // a joint that slides along its own turned faces passes no force across the slide: S = N (rotation + w'), the partner of the
+        // couple N x offset above; both together keep the equations symmetric (Maxwell-Betti)
+        const faces = axial === 0 ? S : [0, -axial, 0, 1];
+        condition(3, faces, NONE, NOTHING, axial);
+        condition(3, NONE, faces, NOTHING, axial);
       } else if (!held) condition(3, MINUS_S, k === 0 ? S : [-k, 0, 0, 1], springS);
     } else if (right) {
       if (held) condition(0, NONE, V, GROUND_AND_OFFSET);

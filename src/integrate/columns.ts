@@ -180,6 +180,11 @@ export class Columns {
     return out;
   }
 
+  /** Slope of the initial shape just right of break b in one column. */
+  shapeSlope(b: number, column: number): number {
+    return this.shape ? (this.shape[(b * this.count + column) * 3 + 1] ?? 0) : 0;
+  }
+
   get hasShape(): boolean {
     return this.shape !== null;
   }

@@ -11,7 +11,10 @@ import { findStations, transferMatrices } from './closing';
 import { carry } from './fields';
 import { cutBeam } from './regions';
 
-/** Number of critical loads passed at axial force `axial` (negative = compression); null when the beam cannot be cut. */
+/**
+ * Number of critical loads passed at axial force `axial` (negative = compression); null when the beam cannot be cut.
+ * Tension matters too where a joint slides: its two halves can snap apart sideways under tension.
+ */
 export function passedModes(model: BeamModel, axial: number): number | null {
   // Engesser: a shear-flexible beam has no stiffness left at N = -GA
   for (const stretch of model.ga) {
@@ -133,13 +136,14 @@ function elementStiffness(T: readonly number[]): Float64Array {
   return k;
 }
 
-/** Critical compressive force below |axial|, found by halving on the count of passed modes. */
+/** Size of the critical force between 0 and `axial` (of its sign), found by halving on the count of passed modes. */
 export function criticalLoad(model: BeamModel, axial: number): number {
+  const sign = Math.sign(axial);
   let lo = 0;
-  let hi = -axial;
+  let hi = Math.abs(axial);
   for (let i = 0; i < 60 && hi - lo > 4e-16 * hi; i++) {
     const mid = 0.5 * (lo + hi);
-    if ((passedModes(model, -mid) ?? 1) > 0) hi = mid;
+    if ((passedModes(model, sign * mid) ?? 1) > 0) hi = mid;
     else lo = mid;
   }
   return 0.5 * (lo + hi);

@@ -198,7 +198,7 @@ function checkColumn(system: System, column: number, reach: readonly Reach[]): R
     if (opened !== 0 && axial !== 0) couple -= axial * opened;
     work.add(down * mean(0));
     work.add(couple * mean(1));
-    work.add(-offset * mean(3));
+    work.add(-(station?.slide ? opened : offset) * mean(3));
     work.add(kink * mean(2));
     if (b === regions.length) break;
 

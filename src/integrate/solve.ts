@@ -105,13 +105,18 @@ class SecondOrder implements Solution {
     const refuse = (issue: Issue): never => {
       throw new BeamProblem([issue], issue.code);
     };
-    if (axial < 0) {
+    const slides = this.model.releases.some((r) => r.kind === 'shear');
+    if (axial < 0 || (axial > 0 && slides)) {
       const passed = passedModes(this.model, axial * (1 + CRITICAL_MARGIN));
       if (passed !== null && passed > 0) {
         refuse({
           code: 'past-critical-load',
           kind: 'unavailable',
-          detail: { critical: criticalLoad(this.model, axial * (1 + 2 * CRITICAL_MARGIN)), applied: -axial },
+          detail: {
+            critical: criticalLoad(this.model, axial * (1 + 2 * CRITICAL_MARGIN)),
+            applied: Math.abs(axial),
+            sense: axial < 0 ? 'compression' : 'tension',
+          },
         });
       }
     }
