@@ -17,7 +17,11 @@ module.exports = {
     project('taskpane', {
       testEnvironment: 'jsdom',
       // styles are the browser tests' business
-      moduleNameMapper: { '\\.css$': '<rootDir>/tests/helpers/no-styles.cjs' },
+      moduleNameMapper: {
+        '\\.css$': '<rootDir>/tests/helpers/no-styles.cjs',
+        // their default entry is an ES module, which jest does not load; the same code stands beside it in the older form
+        '^(d3-[a-z]+(-[a-z]+)?|internmap)$': '<rootDir>/node_modules/$1/dist/$1.js',
+      },
     }),
     project('workbench'),
     project('browser'),

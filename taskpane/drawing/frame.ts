@@ -1,4 +1,5 @@
 /** What a drawing is made of: the input, the common horizontal axis, and a few helpers for paths. */
+import { scaleLinear } from 'd3-scale';
 import type { BeamModel, Quantity, Response } from '../engine';
 import type { Separators } from '../port';
 
@@ -58,12 +59,6 @@ export interface Scale {
   invert(pixel: number): number;
 }
 
-function linearScale(from: number, to: number, left: number, right: number): Scale {
-  const perUnit = (right - left) / (to - from);
-  const scale = (at: number): number => left + (at - from) * perUnit;
-  return Object.assign(scale, { invert: (pixel: number) => from + (pixel - left) / perUnit });
-}
-
 export interface Frame {
   readonly width: number;
   readonly x: Scale;
@@ -74,7 +69,7 @@ export interface Frame {
 export function makeFrame(model: BeamModel, width: number): Frame {
   const left = MARGIN;
   const right = Math.max(left + 60, width - MARGIN);
-  return { width, left, right, x: linearScale(model.start, model.end, left, right) };
+  return { width, left, right, x: scaleLinear([model.start, model.end], [left, right]) };
 }
 
 /** One decimal of a pixel is enough, and keeps golden files steady. */
