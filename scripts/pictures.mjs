@@ -19,7 +19,7 @@ const PICTURES = [
   ['canopy', 'Canopy beam', 'E20', 1400, 960, 'light', null],
   ['pane', 'Purlin', 'E19', 1400, 1000, 'light', '#pane'],
   ['schedule', 'Joist schedule', 'M11', 1400, 760, 'light', null],
-  ['dark', 'Gallery', 'E21', 1400, 960, 'dark', null],
+  ['dark', 'Gallery', 'E22', 1400, 960, 'dark', null],
 ];
 
 const served = await serve({ folder: process.env.SPANROW_DIST ?? path.join(root, 'dist'), port: 0 });

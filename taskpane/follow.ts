@@ -315,9 +315,11 @@ function withHeader(cell: Area, top: number, bottom: number, block: Block, at: A
     let to = cell.column;
     while (to + 1 < right && !blank(at(row, to + 1))) to++;
     const words = new Set<string>();
+    let items = from;
     for (let column = from; column <= to; column++) {
       const name = columnOf(at(row, column));
       if (name !== null) words.add(name);
+      if (name === 'Item') items = column;
     }
     if (!words.has('Item') || !words.has('At')) continue;
     let last = row;
@@ -326,6 +328,8 @@ function withHeader(cell: Area, top: number, bottom: number, block: Block, at: A
       let filled = false;
       for (let column = from; column <= to; column++) filled ||= !blank(at(next, column));
       if (filled) {
+        // after a blank row only another item belongs to the beam: what else stands there is the rest of the sheet
+        if (gap > 0 && !isItemRow([at(next, items)])) break;
         last = next;
         gap = 0;
       } else gap++;

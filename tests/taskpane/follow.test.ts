@@ -85,6 +85,20 @@ test('rows that nobody asks yet: with a heading, and without', async () => {
   expect([bare.via, where(bare)]).toEqual(['found', 'B20:G25']);
 });
 
+test('the rest of the sheet under the rows is no part of them', async () => {
+  const port = new MemoryPort();
+  port.fill('B4', ROWS);
+  port.fill('B12', [['Results'], ['Largest deflection', null, null, 7]]);
+  expect(where(subject(await at(port, 'D6')))).toBe('B4:G10');
+  expect((await at(port, 'D12')).kind).not.toBe('subject');
+  // a blank row between items is: blank rows are skipped
+  port.fill('B12', [
+    ['point', 2, null, 5, 'kN'],
+    [null, null, null, null],
+  ]);
+  expect(where(subject(await at(port, 'D6')))).toBe('B4:G12');
+});
+
 test('rows beside other cells are not mistaken for them; a lone word is no beam', async () => {
   const port = new MemoryPort();
   port.fill('A1', [['pin', 'code', 1234]]);
