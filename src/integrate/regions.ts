@@ -144,6 +144,15 @@ function cutStretch(
 ): Issue | null {
   const eiConstant = constantOf(ei);
   const gaConstant = ga ? constantOf(ga) : null;
+  const f0 = eiConstant !== null ? 1 / eiConstant : 0;
+  const plain = k === 0 && axial === 0 && loads.length === 0 && f0 > 0 && f0 < Infinity;
+  if (plain && (!ga || (gaConstant !== null && gaConstant > 0 && 1 / gaConstant > 0))) {
+    // the common region: nothing to fit, nothing to divide
+    const g = gaConstant !== null ? 1 / gaConstant : 0;
+    regions.push({ x0: a, h: b - a, origin: 0, f: f0, g, fPoly: null, gPoly: null, k: 0, growth: 0 });
+    breaks.push(b);
+    return null;
+  }
   const flexibility = (stretch: SectionStretch, extra: number) => (x: number) =>
     1 / (lawAt(stretch, x) + extra);
   const before = regions.length;
@@ -154,13 +163,7 @@ function cutStretch(
     if (ga && gaConstant !== null) need(positive(1 / gaConstant), ga, a);
     // with an axial force the shear law becomes v' = (1 - N g) theta + g (S - N w'), g = 1/(GA + N) (Engesser; see fields.ts)
     const gOf = ga ? flexibility(ga, axial) : null;
-    const simple = eiConstant !== null && (!ga || gaConstant !== null) && loads.length === 0;
-    const f0 = eiConstant !== null ? 1 / eiConstant : 0;
     const g0 = ga && gaConstant !== null ? 1 / (gaConstant + axial) : 0;
-    if (simple && k === 0 && axial === 0) {
-      push({ x0: a, h: b - a, origin: 0, f: f0, g: g0, fPoly: null, gPoly: null, k: 0, growth: 0 }, b);
-      return null;
-    }
     const grown = (from: number, to: number): number => {
       const h = to - from;
       let f = f0;

@@ -131,6 +131,9 @@ function checkColumn(system: System, column: number, reach: readonly Reach[]): R
   const end = [0, 0, 0, 0];
   const own = [0, 0, 0, 0];
   /** states just left and just right of the break */
+  const leftBuffer = [0, 0, 0, 0];
+  const rightBuffer = [0, 0, 0, 0];
+  const lever = [0, 0];
   let left: number[] | null = null;
   let right: number[] | null = null;
   let vStart = 0;
@@ -142,9 +145,11 @@ function checkColumn(system: System, column: number, reach: readonly Reach[]): R
     if (b === regions.length) right = null;
     else if (station) {
       const at = (next * C + column) * 4;
-      right = [states[at]!, states[at + 1]!, states[at + 2]!, states[at + 3]!];
+      right = rightBuffer;
+      for (let i = 0; i < 4; i++) right[i] = states[at + i]!;
     } else {
-      right = left!.slice();
+      right = rightBuffer;
+      for (let i = 0; i < 4; i++) right[i] = left![i]!;
       addJump(columns, b, column, axial, 1, right, 0);
     }
     if (!left) vStart = right![0]!;
@@ -206,11 +211,11 @@ function checkColumn(system: System, column: number, reach: readonly Reach[]): R
     const region = regions[b]!;
     columns.read(b, column, load);
     const fields = integrateRegion(region, axial, load, right!);
-    const arrived: number[] = right!.slice();
-    carry(region, matrices[b]!, arrived, 0);
+    left = leftBuffer;
+    for (let i = 0; i < 4; i++) left[i] = right![i]!;
+    carry(region, matrices[b]!, left, 0);
     particular(region, axial, load, own, 0);
-    for (let i = 0; i < 4; i++) arrived[i]! += own[i]!;
-    left = arrived;
+    for (let i = 0; i < 4; i++) left[i]! += own[i]!;
     const o = region.origin;
     end[0] = evaluate(fields.v, o + 1);
     end[1] = evaluate(fields.t, o + 1);
@@ -220,7 +225,8 @@ function checkColumn(system: System, column: number, reach: readonly Reach[]): R
     const q = loadPolynomial(region, load);
     const soil = region.k !== 0 ? fields.v.map((a) => -region.k * a) : null;
     const net = soil ? addScaled(q, soil, 1) : q;
-    const lever = [x - h * o, h];
+    lever[0] = x - h * o;
+    lever[1] = h;
     const resultant = h * productIntegral(net, one, o);
     force.add(resultant);
     moment.add(h * productIntegral(net, lever, o));
