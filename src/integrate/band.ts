@@ -90,7 +90,8 @@ export class BandMatrix {
       const base = r * width;
       for (let k = 0; k < width; k++) largest = Math.max(largest, Math.abs(a[base + k]!));
       if (!(largest > 0) || !Number.isFinite(largest)) return 0;
-      const scale = 2 ** -Math.round(Math.log2(largest));
+      // most rows need none: within a factor of four of 1 the choice of pivots is as good
+      const scale = largest >= 0.25 && largest <= 4 ? 1 : 2 ** -Math.round(Math.log2(largest));
       rowScale[r] = scale;
       if (scale !== 1) for (let k = 0; k < width; k++) a[base + k]! *= scale;
     }
@@ -136,7 +137,7 @@ export class BandMatrix {
 
   /**
    * Solves for right-hand side `column`, with one step of refinement; the solution takes its place in `b`.
-   * Returns the largest residual relative to the largest row of terms.
+   * Returns the largest residual before that step, relative to the largest row of terms.
    */
   solve(column: number): number {
     const { n, kl, ku, width, rowScale, original, rhs, residual, x, b } = this;
@@ -145,28 +146,22 @@ export class BandMatrix {
     this.substitute(x);
     let worst = 0;
     let scale = 0;
-    for (let pass = 0; ; pass++) {
-      worst = 0;
-      scale = 0;
-      for (let r = 0; r < n; r++) {
-        let sum = rhs[r]!;
-        let size = Math.abs(sum);
-        const base = r * width - r + kl;
-        const first = Math.max(0, r - kl);
-        const last = Math.min(n - 1, r + ku);
-        for (let c = first; c <= last; c++) {
-          const term = original[base + c]! * x[c]!;
-          sum -= term;
-          size += Math.abs(term);
-        }
-        residual[r] = sum;
-        worst = Math.max(worst, Math.abs(sum));
-        scale = Math.max(scale, size);
+    for (let r = 0; r < n; r++) {
+      let sum = rhs[r]!;
+      let size = Math.abs(sum);
+      const base = r * width - r + kl;
+      const last = Math.min(n - 1, r + ku);
+      for (let c = Math.max(0, r - kl); c <= last; c++) {
+        const term = original[base + c]! * x[c]!;
+        sum -= term;
+        size += Math.abs(term);
       }
-      if (pass === 1) break;
-      this.substitute(residual);
-      for (let r = 0; r < n; r++) x[r]! += residual[r]!;
+      residual[r] = sum;
+      if (Math.abs(sum) > worst) worst = Math.abs(sum);
+      if (size > scale) scale = size;
     }
+    this.substitute(residual);
+    for (let r = 0; r < n; r++) x[r]! += residual[r]!;
     for (let r = 0; r < n; r++) b[at + r] = x[r]!;
     return scale > 0 ? worst / scale : 0;
   }

@@ -202,7 +202,7 @@ function sum(p: Poly, q: Poly): Poly {
 }
 
 /** Index of a position that is known to be a break. */
-export function breakIndex(breaks: Float64Array, x: number): number {
+export function breakIndex(breaks: readonly number[], x: number): number {
   let lo = 0;
   let hi = breaks.length - 1;
   while (lo < hi) {

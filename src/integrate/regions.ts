@@ -30,7 +30,7 @@ export interface Region {
 export interface Cut {
   readonly regions: readonly Region[];
   /** regions.length + 1 positions */
-  readonly breaks: Float64Array;
+  readonly breaks: readonly number[];
   /** fitted shapes of distributed loads given as functions: load -> region -> polynomial in u (origin -0.5) */
   readonly shapes: ReadonlyMap<Load, ReadonlyMap<number, Poly>>;
 }
@@ -43,6 +43,8 @@ const MAX_HALVINGS = 30;
 const MAX_PIECES = 2000;
 const MAX_STIFF_PIECES = 20000;
 
+const NO_SHAPES = new Map<Load, Map<number, Poly>>();
+
 export function cutBeam(
   model: BeamModel,
   axial: number,
@@ -50,11 +52,11 @@ export function cutBeam(
   const primary = primaryBreaks(model);
   const regions: Region[] = [];
   const breaks: number[] = [model.start];
-  const shapes = new Map<Load, Map<number, Poly>>();
   const shaped = model.loads.filter(
     (l): l is Load & { kind: 'distributed'; law: { kind: 'function' } & Law } =>
       l.kind === 'distributed' && l.law.kind === 'function',
   );
+  const shapes = shaped.length === 0 ? NO_SHAPES : new Map<Load, Map<number, Poly>>();
   let ei = 0;
   let ga = 0;
   let soil = 0;
@@ -73,7 +75,7 @@ export function cutBeam(
     const issue = cutStretch(a, b, eiStretch, gaStretch, k, axial, loads, regions, breaks, shapes);
     if (issue) return { ok: false, issue };
   }
-  return { ok: true, cut: { regions, breaks: Float64Array.from(breaks), shapes } };
+  return { ok: true, cut: { regions, breaks, shapes } };
 }
 
 function primaryBreaks(model: BeamModel): number[] {

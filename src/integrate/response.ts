@@ -23,7 +23,8 @@ export interface System {
   readonly closed: Closed;
   /** station index at the left of each region */
   readonly segmentOf: readonly number[];
-  readonly residuals: Residuals;
+  /** filled in by the self-check, before anybody sees the system */
+  residuals: Residuals;
 }
 
 /** Two extremes within this factor of each other are one: the leftmost place is reported, so it does not flicker with rounding. */
@@ -53,7 +54,7 @@ export class BeamResponse implements Response {
   }
 
   get breaks(): readonly number[] {
-    return Array.from(this.system.cut.breaks);
+    return this.system.cut.breaks;
   }
 
   /** Carries the state through the segment right of a station. */

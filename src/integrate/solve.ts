@@ -44,7 +44,7 @@ function build(model: BeamModel, axial: number, count: number, sorting: Sorting)
   for (let i = 0; i + 1 < stations.length; i++) {
     for (let r = stations[i]!.at; r < stations[i + 1]!.at; r++) segmentOf.push(i);
   }
-  const system = {
+  const system: System = {
     model,
     cut,
     columns,
@@ -52,13 +52,13 @@ function build(model: BeamModel, axial: number, count: number, sorting: Sorting)
     matrices,
     closed,
     segmentOf,
-    residuals: { equilibrium: 0, conditions: closed.conditions, energy: 0 },
+    residuals: { equilibrium: 0, conditions: 0, energy: 0 },
   };
-  const residuals = selfCheck(system);
-  for (const [which, residual] of Object.entries(residuals) as [string, number][]) {
-    if (!(residual <= REFUSE)) return { ok: false, issue: failed(which, residual) };
-  }
-  return { ok: true, system: { ...system, residuals } };
+  const { equilibrium, conditions, energy } = (system.residuals = selfCheck(system));
+  if (!(equilibrium <= REFUSE)) return { ok: false, issue: failed('equilibrium', equilibrium) };
+  if (!(conditions <= REFUSE)) return { ok: false, issue: failed('conditions', conditions) };
+  if (!(energy <= REFUSE)) return { ok: false, issue: failed('energy', energy) };
+  return { ok: true, system };
 }
 
 function failed(which: string, residual: number): Issue {
@@ -70,21 +70,28 @@ function failed(which: string, residual: number): Issue {
 }
 
 class FirstOrder implements Solution {
-  private readonly known = new Map<string, Response>();
+  private everything: Response | null = null;
+  private known: Map<string, Response> | null = null;
   constructor(private readonly system: System) {}
 
   respond(factors: readonly number[] | null): Response {
-    const key = factors ? factors.join(' ') : '';
-    let response = this.known.get(key);
+    if (!factors) return (this.everything ??= this.combine(null));
+    const key = factors.join(' ');
+    const known = (this.known ??= new Map<string, Response>());
+    let response = known.get(key);
     if (!response) {
-      // the loads that always act, then the cases
-      const weights = [1];
-      for (let c = 1; c < this.system.columns.count; c++) weights.push(factors ? (factors[c - 1] ?? 0) : 1);
-      response = new BeamResponse(this.system, weights);
-      if (this.known.size >= MAX_RESPONSES) this.known.clear();
-      this.known.set(key, response);
+      response = this.combine(factors);
+      if (known.size >= MAX_RESPONSES) known.clear();
+      known.set(key, response);
     }
     return response;
+  }
+
+  private combine(factors: readonly number[] | null): Response {
+    // the loads that always act, then the cases
+    const weights = [1];
+    for (let c = 1; c < this.system.columns.count; c++) weights.push(factors ? (factors[c - 1] ?? 0) : 1);
+    return new BeamResponse(this.system, weights);
   }
 }
 
