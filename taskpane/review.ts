@@ -59,10 +59,14 @@ function marksOf(subject: Subject, model: BeamModel): number[] {
   return [...new Set(marks)];
 }
 
+/** An argument that is there: blank and 0 are the same on some hosts. */
+function isGiven(limit: unknown): boolean {
+  return limit !== null && limit !== undefined && limit !== '' && limit !== 0;
+}
+
 /** Asks CHECK for its lines; a beam without limits has none, which is no fault. */
 function checksOf(open: OpenBeam, limit: unknown): { checks: Check[]; issues: readonly Issue[] } {
-  const wanted = limit !== null && limit !== undefined && limit !== '' && limit !== 0;
-  if (!wanted && open.model.limits.length === 0) return { checks: [], issues: [] };
+  if (!isGiven(limit) && open.model.limits.length === 0) return { checks: [], issues: [] };
   try {
     const [, ...rows] = ask.check(open, limit);
     const checks = rows
@@ -83,11 +87,21 @@ function checksOf(open: OpenBeam, limit: unknown): { checks: Check[]; issues: re
   }
 }
 
-/** CHECK lists every span for every limit, spans from left to right: the tightest limit of each span is drawn. */
-function limitLines(model: BeamModel, checks: readonly Check[]): LimitLine[] {
+/**
+ * CHECK lists every span for every limit, spans from left to right: the tightest limit of each span is drawn. A limit that is set on
+ * another combination than the drawn one says nothing about the drawn curve and is left to the table of checks. `own`: the formula's own limit,
+ * which replaces the rows.
+ */
+function limitLines(open: OpenBeam, checks: readonly Check[], own: boolean): LimitLine[] {
+  const { model } = open;
   const spans = spansOf(model);
+  const drawn = open.combination?.factors ?? model.cases.map(() => 1);
+  const concerns = (k: number): boolean => {
+    const set = own ? null : (model.limits[Math.floor(k / spans.length)]?.combination ?? null);
+    return set === null || set.factors.every((factor, i) => factor === drawn[i]);
+  };
   return spans.flatMap((span, i) => {
-    const here = checks.filter((check, k) => k % spans.length === i && check.allowed > 0);
+    const here = checks.filter((check, k) => k % spans.length === i && check.allowed > 0 && concerns(k));
     const tightest = [...here].sort((a, b) => a.allowed - b.allowed)[0];
     if (!tightest) return [];
     const { from, to, chord } = span;
@@ -182,7 +196,16 @@ export function reviewCells(
     open,
     model,
     drawing: model
-      ? { ...drawingOf(review, model, open, marks, limitLines(model, checks)), bands: envelope.bands }
+      ? {
+          ...drawingOf(
+            review,
+            model,
+            open,
+            marks,
+            open ? limitLines(open, checks, isGiven(wish.limit ?? subject.limit)) : [],
+          ),
+          bands: envelope.bands,
+        }
       : (sketch?.drawing ?? null),
     checks,
     marks,

@@ -341,6 +341,23 @@ describe('place', () => {
     expect(words('.sp-code')).toBe('=SPANROW.MOMENT(Beams!$B$4:$I$10, "3-", "1.5 Q")');
   });
 
+  test('a limit line is drawn only for the combination that is drawn', async () => {
+    const rows = [
+      ...ROWS,
+      ['uniform', 0, 6, 5, null, 'kN/m', 'G'],
+      ['limit', null, null, 'span/360', null, null, 'Q'],
+    ];
+    const lines = (): number => root.querySelectorAll('.sp-limit').length;
+    await open('L2', rows, '=SPANROW.DEFLECTION(B4:I12, 3, "Q")');
+    expect(lines()).toBe(1);
+    // everything acts, the limit is on Q alone: its line would make the beam look worse than it is
+    await open('L2', rows, '=SPANROW.DEFLECTION(B4:I12, 3)');
+    expect(lines()).toBe(0);
+    // a limit of the formula's own is tested under the formula's combination
+    await open('L2', rows, '=SPANROW.USED(B4:I12, "span/300")');
+    expect(lines()).toBe(1);
+  });
+
   test('a record sheet holds rows, reading, reactions, extremes, working, date, version and cautions', async () => {
     await open('L2', [...ROWS, ['limit', null, null, 'span/360']], '=SPANROW.DEFLECTION(B4:I11, 3)');
     port.abilities.add('addSheet');
