@@ -4,7 +4,8 @@ import { solve } from '../src/integrate/solve';
 import type { BeamModel } from '../src/beam/model';
 import type { Response, Solution } from '../src/solution';
 import { beam, distributed, pin, point, stretch } from '../tests/helpers/model';
-import { measure, ratio, seeded, show } from './timing';
+import { seeded } from '../tests/helpers/random';
+import { measure, ratio, show } from './timing';
 
 function solved(model: BeamModel): Solution {
   const result = solve(model);

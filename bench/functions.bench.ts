@@ -4,7 +4,8 @@
  */
 import fs from 'node:fs';
 import path from 'node:path';
-import { measure, ratio, seeded, show } from './timing';
+import { seeded } from '../tests/helpers/random';
+import { measure, ratio, show } from './timing';
 
 type Call = (...args: unknown[]) => unknown;
 type Cells = unknown[][];

@@ -184,10 +184,6 @@ export class Columns {
   shapeSlope(b: number, column: number): number {
     return this.shape ? (this.shape[(b * this.count + column) * 3 + 1] ?? 0) : 0;
   }
-
-  get hasShape(): boolean {
-    return this.shape !== null;
-  }
 }
 
 function zeros(count: number): number[] {

@@ -18,9 +18,6 @@ import { loadPolynomial, noLoad, type Fields, type RegionLoad } from './region-l
 import type { Region } from './regions';
 import { integrateSeries, seriesState } from './series';
 
-/** Order of a state vector everywhere in src/integrate: deflection, rotation, moment, vertical force. */
-export type State = number[];
-
 export function isCoupled(region: Region, axial: number): boolean {
   return axial !== 0 || region.k !== 0;
 }

@@ -5,6 +5,7 @@
  * Lengths are differences of neighbouring positions, taken once; nothing downstream ever forms x^3 of an absolute position. That is
  * why two loads 1e-7 of the span apart, or a beam whose positions start at 1,000, keep their digits.
  */
+import { ascending } from '../ascending';
 import type { BeamModel, Law, Load, SectionStretch } from '../beam/model';
 import type { Issue } from '../issue';
 import { fitPiece } from './fit';
@@ -90,18 +91,7 @@ function primaryBreaks(model: BeamModel): number[] {
     if ('at' in l) all.push(l.at);
     else all.push(l.from, l.to);
   }
-  return distinct(all.length > 40 ? Array.from(Float64Array.from(all).sort()) : insertionSort(all));
-}
-
-/** Short lists: quicker than the general sort, and without its temporary copies. */
-function insertionSort(list: number[]): number[] {
-  for (let i = 1; i < list.length; i++) {
-    const x = list[i]!;
-    let j = i - 1;
-    for (; j >= 0 && list[j]! > x; j--) list[j + 1] = list[j]!;
-    list[j + 1] = x;
-  }
-  return list;
+  return distinct(ascending(all));
 }
 
 /** Keeps the first of equal neighbours, in place. */

@@ -1,3 +1,5 @@
+import { ascending } from '../ascending';
+
 /**
  * Positions that are meant to be one. Two rows may reach the same place by different arithmetic (12'-6" and 12.5 ft, L/3*2
  * and L-L/3, 0.1*3 and 0.3); the results differ by a few units in the last place, and a beam with a support and a load 1e-16
@@ -23,8 +25,7 @@ export function snap(positions: number[]): { readonly start: number; readonly en
 
 /** The positions that stay, ascending: each is further than `near` from the one before. */
 function headsOf(positions: readonly number[], near: number): number[] {
-  const sorted =
-    positions.length > 24 ? Array.from(Float64Array.from(positions).sort()) : insertionSort(positions);
+  const sorted = ascending(positions);
   let n = 1;
   for (let i = 1; i < sorted.length; i += 1) {
     if (sorted[i]! - sorted[n - 1]! > near) {
@@ -46,19 +47,4 @@ function headFor(heads: readonly number[], p: number): number {
     else high = middle - 1;
   }
   return heads[low]!;
-}
-
-/** A table has few positions, and for few this is the fastest sort. */
-function insertionSort(positions: readonly number[]): number[] {
-  const sorted = positions.slice();
-  for (let i = 1; i < sorted.length; i += 1) {
-    const p = sorted[i]!;
-    let j = i - 1;
-    while (j >= 0 && sorted[j]! > p) {
-      sorted[j + 1] = sorted[j]!;
-      j -= 1;
-    }
-    sorted[j + 1] = p;
-  }
-  return sorted;
 }

@@ -1,5 +1,5 @@
 import { BandMatrix } from '../../../src/integrate/band';
-import { seeded } from '../../../bench/timing';
+import { seeded } from '../../helpers/random';
 
 const EPS = 2 ** -52;
 
